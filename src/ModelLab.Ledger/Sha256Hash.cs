@@ -1,14 +1,19 @@
+using System.Security.Cryptography;
+
 namespace ModelLab.Ledger;
 
 /// <summary>A SHA-256 value; its text is 64 lower-case hexadecimal digits.</summary>
 public readonly struct Sha256Hash : IEquatable<Sha256Hash>
 {
+    private static readonly byte[] AllZero = new byte[SHA256.HashSizeInBytes];
+
     private readonly byte[]? bytes;
 
     /// <summary>Takes 32 bytes.</summary>
+    /// <exception cref="ArgumentException">Another number of bytes.</exception>
     public Sha256Hash(ReadOnlySpan<byte> value)
     {
-        if (value.Length != 32)
+        if (value.Length != SHA256.HashSizeInBytes)
         {
             throw new ArgumentException("A SHA-256 value has 32 bytes.", nameof(value));
         }
@@ -16,14 +21,16 @@ public readonly struct Sha256Hash : IEquatable<Sha256Hash>
         bytes = value.ToArray();
     }
 
+    private Sha256Hash(byte[] owned) => bytes = owned;
+
     /// <summary>All zero: what stands before the first entry.</summary>
     public static Sha256Hash Zero => default;
 
     /// <summary>The 32 bytes.</summary>
-    public ReadOnlySpan<byte> Bytes => bytes ?? new byte[32];
+    public ReadOnlySpan<byte> Bytes => bytes ?? AllZero;
 
     /// <summary>Hashes data as they are (no domain tag).</summary>
-    public static Sha256Hash Of(ReadOnlySpan<byte> data) => new(System.Security.Cryptography.SHA256.HashData(data));
+    public static Sha256Hash Of(ReadOnlySpan<byte> data) => new(SHA256.HashData(data));
 
     /// <summary>Reads 64 lower-case hexadecimal digits.</summary>
     /// <exception cref="FormatException">Anything else.</exception>

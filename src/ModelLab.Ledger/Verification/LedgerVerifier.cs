@@ -1,24 +1,92 @@
 using ModelLab.Ledger.Entries;
+using ModelLab.Ledger.Merkle;
 
 namespace ModelLab.Ledger.Verification;
 
-/// <summary>What a verification found.</summary>
-/// <param name="Ok">Nothing wrong.</param>
-/// <param name="Entries">Entries read.</param>
-/// <param name="Head">Head computed from the entries up to the first bad one.</param>
-/// <param name="FirstBad">Number of the first bad entry (where it stands, from 1), or null.</param>
-/// <param name="Problem">What is wrong with it, in one sentence, or null.</param>
-public sealed record VerificationResult(bool Ok, long Entries, LedgerHead Head, long? FirstBad, string? Problem);
-
-/// <summary>Verifies stored bytes: form, numbers, chain, tree.</summary>
+/// <summary>
+/// Verifies stored bytes: form, ledger, numbers, chain, tree. Takes one entry at a time and keeps the frontier of the
+/// tree alone, so that the length of a ledger does not matter.
+/// </summary>
 public sealed class LedgerVerifier
 {
+    private readonly string ledgerId;
+    private readonly MerkleFrontier tree = new();
+    private Sha256Hash last = Sha256Hash.Zero;
+    private DateTimeOffset lastAt = DateTimeOffset.MinValue;
+    private long entries;
+    private Difference? firstBad;
+    private long stepsBack;
+    private long? firstStepBack;
+
     /// <summary>Begins a verification of one ledger.</summary>
-    public LedgerVerifier(string ledgerId) => _ = ledgerId;
+    /// <param name="ledgerId">The ledger all entries must name.</param>
+    public LedgerVerifier(string ledgerId) => this.ledgerId = ledgerId;
+
+    private LedgerHead Head => new(ledgerId, tree.Count, last, tree.SubtreeRoots);
 
     /// <summary>Takes the next entry's stored bytes. Goes on counting after a bad one, which is kept as the first.</summary>
-    public void Add(ReadOnlyMemory<byte> canonicalBytes) => throw new NotImplementedException();
+    public void Add(ReadOnlyMemory<byte> canonicalBytes)
+    {
+        entries++;
+        if (firstBad is not null)
+        {
+            return;
+        }
+
+        EntryEnvelope entry;
+        try
+        {
+            entry = EntryEnvelope.Read(canonicalBytes.Span);
+        }
+        catch (FormatException e)
+        {
+            firstBad = new Difference(entries, $"Entry {entries} is not what an entry is stored as. {e.Message}");
+            return;
+        }
+
+        if (FaultOf(entry) is { } fault)
+        {
+            firstBad = new Difference(entries, fault);
+            return;
+        }
+
+        if (entry.At < lastAt)
+        {
+            stepsBack++;
+            firstStepBack ??= entries;
+        }
+
+        lastAt = entry.At;
+        last = MerkleHash.Leaf(canonicalBytes.Span);
+        tree.Append(last);
+    }
 
     /// <summary>Ends it: compares with the stored head, where one is given (catches a cut tail).</summary>
-    public VerificationResult Finish(LedgerHead? storedHead = null) => throw new NotImplementedException();
+    public VerificationResult Finish(LedgerHead? storedHead = null)
+    {
+        var head = Head;
+        var fault = firstBad ?? (storedHead is null ? null : HeadComparison.Compare(head, storedHead));
+        return new VerificationResult(fault is null, entries, head, fault?.FirstBad, fault?.Problem)
+        {
+            StepsBackInTime = stepsBack,
+            FirstStepBackInTime = firstStepBack,
+        };
+    }
+
+    private string? FaultOf(EntryEnvelope entry)
+    {
+        if (entry.LedgerId != ledgerId)
+        {
+            return $"Entry {entries} belongs to the ledger '{entry.LedgerId}', not to '{ledgerId}'.";
+        }
+
+        if (entry.Number != entries)
+        {
+            return $"Entry {entries} calls itself number {entry.Number}: entries are missing, doubled or out of order.";
+        }
+
+        return entry.Previous == last
+            ? null
+            : $"Entry {entries} does not follow the entry before it: it holds another hash of it, so one of the two was changed.";
+    }
 }
