@@ -26,6 +26,15 @@ public enum ModelRefusal
 
     /// <summary>Columns are (nearly) combinations of others; <see cref="ModelRefusedException.Aliases"/> names them.</summary>
     RankDeficient,
+
+    /// <summary>The outcome is also used in a term.</summary>
+    OutcomeAmongTerms,
+
+    /// <summary>The model has neither an intercept nor a term.</summary>
+    NothingToFit,
+
+    /// <summary>The values of a variable or power are so large or so small that squares leave the range of double.</summary>
+    ValueOutOfRange,
 }
 
 /// <summary>One column that the columns before it already determine.</summary>

@@ -1,4 +1,5 @@
 using ModelLab.Statistics.Designs;
+using ModelLab.Statistics.LeastSquares;
 
 namespace ModelLab.Statistics.Inference;
 
@@ -8,27 +9,6 @@ namespace ModelLab.Statistics.Inference;
 /// <param name="FullModelMeanSquare">Residual mean square of the full model on the same rows, for Mallows' Cp; null: no Cp.</param>
 public sealed record FitOptions(double Confidence, IReadOnlyCollection<Term> HeldIn, double? FullModelMeanSquare = null);
 
-/// <summary>Row-wise results, one value a row analysed, in the order of the rows.</summary>
-/// <param name="Fitted">ŷ.</param>
-/// <param name="Residual">y − ŷ.</param>
-/// <param name="Leverage">Diagonal of X(X'X)⁻¹X'.</param>
-/// <param name="StudentizedInternal">e/(s√(1 − h)); null where s = 0 or h = 1.</param>
-/// <param name="StudentizedExternal">The same with s of the fit without the row.</param>
-/// <param name="CooksDistance">r²h/(p(1 − h)), r internally studentised (Cook 1977).</param>
-public sealed record RowResults(
-    double[] Fitted, double[] Residual, double[] Leverage,
-    double?[] StudentizedInternal, double?[] StudentizedExternal, double?[] CooksDistance);
-
-/// <summary>A fitted model: its figures, and its rows when asked.</summary>
-public sealed class FittedModel
-{
-    /// <summary>The figures.</summary>
-    public ModelResults Results => throw new NotImplementedException();
-
-    /// <summary>Computes the row-wise results.</summary>
-    public RowResults Rows() => throw new NotImplementedException();
-}
-
 /// <summary>Fits by least squares, accuracy first.</summary>
 public static class ModelFitter
 {
@@ -37,5 +17,16 @@ public static class ModelFitter
 
     /// <summary>Fits a design.</summary>
     /// <exception cref="ModelRefusedException">Too few rows, a constant outcome, rank deficiency.</exception>
-    public static FittedModel Fit(Design design, FitOptions options) => throw new NotImplementedException();
+    /// <exception cref="ArgumentOutOfRangeException">The confidence level does not lie between 0 and 1.</exception>
+    public static FittedModel Fit(Design design, FitOptions options)
+    {
+        ArgumentNullException.ThrowIfNull(design);
+        ArgumentNullException.ThrowIfNull(options);
+        if (options.Confidence is not (> 0.0 and < 1.0))
+        {
+            throw new ArgumentOutOfRangeException(nameof(options), options.Confidence, "The confidence level lies between 0 and 1, for example 0.95.");
+        }
+
+        return new FittedModel(LeastSquaresFit.Solve(design), options);
+    }
 }
