@@ -1,0 +1,55 @@
+using System.Globalization;
+
+namespace ModelLab.Intake.Csv.Proposals;
+
+/// <summary>
+/// Counts whole numbers that are often written for a missing value (-9, -99, 999, ...; common practice) and says afterwards which of
+/// them stand apart from the other values: below every other number by a clear step, or above by one. They are questioned, never taken.
+/// </summary>
+internal sealed class SuspectNumbers
+{
+    // a step clear of the other values: a tenth of their range and no less than two
+    private const double ClearShareOfRange = 0.1;
+    private const double ClearStep = 2;
+
+    private static readonly double[] Usual =
+        [-9999, -999, -998, -997, -99, -98, -97, -88, -77, -9, -8, -7, -1, 9, 99, 88, 77, 98, 97, 999, 998, 997, 888, 777, 9999, 8888, 99999, 999999];
+
+    private readonly long[] counts = new long[Usual.Length];
+    private double minimum = double.PositiveInfinity;
+    private double maximum = double.NegativeInfinity;
+
+    /// <summary>Sees a number.</summary>
+    internal void Add(double value, bool whole)
+    {
+        if (whole && value is >= -9999 and <= 999999)
+        {
+            var index = Array.IndexOf(Usual, value);
+            if (index >= 0)
+            {
+                counts[index]++;
+                return;
+            }
+        }
+
+        minimum = value < minimum ? value : minimum;
+        maximum = value > maximum ? value : maximum;
+    }
+
+    /// <summary>The numbers that stand apart, smallest first, as texts.</summary>
+    internal IReadOnlyList<string> Apart()
+    {
+        if (minimum > maximum)
+        {
+            return [];
+        }
+
+        var step = Math.Max(ClearStep, ClearShareOfRange * (maximum - minimum));
+        return [.. Usual.Where((value, i) => counts[i] > 0 && IsApart(value, step)).Order().Select(v => v.ToString(CultureInfo.InvariantCulture))];
+    }
+
+    private bool IsApart(double value, double step) =>
+        value < 0
+            ? minimum >= 0 || value <= minimum - step
+            : value >= maximum + step;
+}
