@@ -40,6 +40,11 @@ internal static class KindProposal
 
         if (column.Distinct.Distinct == 2 && column.Distinct.AnyRepeated)
         {
+            if (view.Numeric && view.Maximum - view.Minimum != 1)
+            {
+                questions.Add(new IntakeQuestion("two-values", "The column holds only two different numbers, and not two neighbouring whole ones as codes are. Are they two groups, or a measure taken at two points?"));
+            }
+
             return VariableKind.Binary;
         }
 

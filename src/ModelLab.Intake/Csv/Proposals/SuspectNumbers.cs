@@ -4,7 +4,8 @@ namespace ModelLab.Intake.Csv.Proposals;
 
 /// <summary>
 /// Counts whole numbers that are often written for a missing value (-9, -99, 999, ...; common practice) and says afterwards which of
-/// them stand apart from the other values: below every other number by a clear step, or above by one. They are questioned, never taken.
+/// them stand apart from the other values: negative where no other number is, or below or above all others by a clear step. The -1 of a
+/// design in -1, 0, 1 is none. They are questioned, never taken.
 /// </summary>
 internal sealed class SuspectNumbers
 {
@@ -50,6 +51,6 @@ internal sealed class SuspectNumbers
 
     private bool IsApart(double value, double step) =>
         value < 0
-            ? minimum >= 0 || value <= minimum - step
+            ? (minimum >= 0 && (value != -1 || maximum > 1)) || value <= minimum - step
             : value >= maximum + step;
 }
