@@ -1,6 +1,6 @@
 """Writes tails.csv: upper tail probabilities at given doubles, to 25 digits.
 
-Run with Debian's packages python3-mpmath and python3-scipy:
+Run with Debian's packages python3-mpmath, python3-numpy and python3-scipy:
 
     /usr/bin/python3 tails.py > tails.csv
 
@@ -12,6 +12,8 @@ proposes places near round probabilities; the values belong to the doubles print
 import sys
 import warnings
 
+import numpy as np
+import scipy.special
 import scipy.stats
 from mpmath import mp, mpf, mpmathify, gamma, loggamma, exp, log, nstr
 
@@ -81,6 +83,20 @@ def row(name, argument, df1, df2, value):
     sys.stdout.flush()
 
 
+def f_place(p, d1, d2):
+    """A place whose tail is about p: far out, where scipy's quantile gives up, from the leading term of the tail."""
+    if p > 1e-20:
+        return float(scipy.stats.f.isf(p, d1, d2))
+    low, high = -700.0, 700.0
+    for _ in range(60):
+        odds = (low + high) / 2
+        log_x, log_y = -np.logaddexp(0, odds), -np.logaddexp(0, -odds)
+        leading = d2 / 2 * log_x + d1 / 2 * log_y - scipy.special.betaln(d2 / 2, d1 / 2)
+        beyond = odds < np.log(d1 / d2) or leading > np.log(p)
+        low, high = (odds, high) if beyond else (low, odds)
+    return float(np.exp((low + high) / 2) * d2 / d1)
+
+
 TARGETS = [0.999, 0.7, 0.5, 0.2, 0.05, 0.001, 1e-8, 1e-20, 1e-60, 1e-150, 1e-300]
 
 print("distribution,argument,df1,df2,tail")
@@ -103,7 +119,7 @@ for df in [0.05, 0.5, 1.0, 2.0, 3.0, 7.25, 10.0, 60.0, 500.0, 12345.678, 1e6, 1e
 for d1 in [0.3, 1.0, 2.0, 5.0, 36.5, 1000.0, 1e5]:
     for d2 in [0.7, 1.0, 4.0, 17.0, 333.0, 1e4, 2e5]:
         for p in TARGETS[int(d2) % 2 :: 2] if d1 < 1e3 else TARGETS[2::4]:
-            f = float(scipy.stats.f.isf(p, d1, d2))
+            f = f_place(p, d1, d2)
             if 1e-290 < f < 1e290:
                 row("f", f, repr(d1), repr(d2), f_tail(f, d1, d2))
 
