@@ -1,0 +1,66 @@
+using System.Text.Json;
+using System.Text.Json.Serialization;
+using ModelLab.Projects.Entries;
+
+namespace ModelLab.Web.Http;
+
+/// <summary>JSON over HTTP: the project's rules, and strict reading.</summary>
+public static class ApiJson
+{
+    /// <summary>Deepest nesting of a body: a term inside a list inside a request needs six.</summary>
+    public const int MaximumDepth = 32;
+
+    /// <summary>The options, for writing and reading outside the framework's own binding.</summary>
+    public static JsonSerializerOptions Options { get; } = Make();
+
+    /// <summary>
+    /// Sets the options: nulls are written; members that are not known, members that stand twice, missing members and nulls where
+    /// none may stand are refused, so that a misspelt word never passes for a default.
+    /// </summary>
+    public static void Apply(JsonSerializerOptions options)
+    {
+        ProjectJson.Apply(options, JsonIgnoreCondition.Never);
+        options.Converters.Add(new FiniteNumberConverter());
+        options.UnmappedMemberHandling = JsonUnmappedMemberHandling.Disallow;
+        options.AllowDuplicateProperties = false;
+        options.RespectNullableAnnotations = true;
+        options.RespectRequiredConstructorParameters = true;
+        options.MaxDepth = MaximumDepth;
+    }
+
+    private static JsonSerializerOptions Make()
+    {
+        var options = new JsonSerializerOptions(JsonSerializerDefaults.Web);
+        Apply(options);
+        options.MakeReadOnly(populateMissingResolver: true);
+        return options;
+    }
+
+    /// <summary>The reader takes 1e999 for infinity; here it is refused.</summary>
+    private sealed class FiniteNumberConverter : JsonConverter<double>
+    {
+        public override double Read(ref Utf8JsonReader reader, Type typeToConvert, JsonSerializerOptions options)
+        {
+            if (reader.TokenType != JsonTokenType.Number)
+            {
+                throw new JsonException("A number is expected here.");
+            }
+
+            var value = reader.GetDouble();
+            return double.IsFinite(value) ? value : throw new JsonException("The number is too large for a double.");
+        }
+
+        public override void Write(Utf8JsonWriter writer, double value, JsonSerializerOptions options)
+        {
+            if (double.IsFinite(value))
+            {
+                writer.WriteNumberValue(value);
+            }
+            else
+            {
+                // A value that does not exist is null over HTTP, never NaN.
+                writer.WriteNullValue();
+            }
+        }
+    }
+}

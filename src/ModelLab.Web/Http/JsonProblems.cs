@@ -1,0 +1,113 @@
+using System.Text.Json;
+using System.Text.Json.Serialization.Metadata;
+using System.Text.RegularExpressions;
+using ModelLab.Projects;
+using ModelLab.Projects.Entries;
+
+namespace ModelLab.Web.Http;
+
+/// <summary>Says in plain words what is wrong with a JSON body, where, and what to do. The reader's own words name types of the program, which mean nothing to the sender.</summary>
+public static partial class JsonProblems
+{
+    /// <summary>Explains what the reader refused. The column of the answer is the JSON path, e.g. <c>$.terms[0].variable</c>.</summary>
+    public static RefusalDetail Explain(JsonException exception)
+    {
+        var path = string.IsNullOrEmpty(exception.Path) ? "$" : exception.Path;
+        return new RefusalDetail(null, path, Message(exception, path));
+    }
+
+    private static string Message(JsonException exception, string path)
+    {
+        var text = PlaceSuffix().Replace(exception.Message, string.Empty);
+        if (Unmapped().Match(text) is { Success: true } unmapped)
+        {
+            return $"The member '{unmapped.Groups["name"].Value}' is not known here.{Known(unmapped.Groups["type"].Value)}";
+        }
+
+        if (Missing().Match(text) is { Success: true } missing)
+        {
+            return $"Missing in the body at {path}: {missing.Groups["names"].Value.TrimEnd('.')}.";
+        }
+
+        if (Twice().Match(text) is { Success: true } twice)
+        {
+            return $"The member '{twice.Groups["name"].Value}' stands twice in one object; send it once.";
+        }
+
+        if (Null().Match(text) is { Success: true } none)
+        {
+            return $"The member '{JsonNamingPolicy.CamelCase.ConvertName(none.Groups["name"].Value)}' may not be null.";
+        }
+
+        if (Unconverted().Match(text) is { Success: true } unconverted)
+        {
+            return $"The value at {path} does not fit: expected is {Expected(unconverted.Groups["type"].Value)}.";
+        }
+
+        var place = exception.LineNumber is { } line ? $" (line {line + 1}, byte {exception.BytePositionInLine + 1})" : string.Empty;
+        return exception.InnerException is JsonException or null && IsSyntax(exception)
+            ? $"The body is not JSON{place}: {text.TrimEnd()}"
+            : $"{text.TrimEnd()}{(path == "$" ? string.Empty : $" It stands at {path}.")}";
+    }
+
+    /// <summary>The reader throws a private type for broken syntax, which the serializer wraps.</summary>
+    private static bool IsSyntax(JsonException exception) =>
+        exception.GetType() != typeof(JsonException) || (exception.InnerException is JsonException inner && inner.GetType() != typeof(JsonException));
+
+    private static string Known(string typeName)
+    {
+        if (Find(typeName) is not { } type)
+        {
+            return string.Empty;
+        }
+
+        var info = ApiJson.Options.GetTypeInfo(type);
+        return info.Kind == JsonTypeInfoKind.Object && info.Properties.Count > 0
+            ? $" Known are: {string.Join(", ", info.Properties.Select(p => p.Name))}."
+            : string.Empty;
+    }
+
+    private static string Expected(string typeName)
+    {
+        var inner = Nullable().Match(typeName) is { Success: true } nullable ? nullable.Groups["type"].Value : typeName;
+        if (Find(inner) is { IsEnum: true } choice)
+        {
+            return "one of " + string.Join(", ", Enum.GetNames(choice).Select(JsonNamingPolicy.CamelCase.ConvertName));
+        }
+
+        return inner switch
+        {
+            "System.String" => "a text",
+            "System.Boolean" => "true or false",
+            "System.Double" => "a number",
+            "System.Int32" or "System.Int64" => "a whole number",
+            _ when inner.StartsWith("System.Collections", StringComparison.Ordinal) || inner.EndsWith("[]", StringComparison.Ordinal) => "a list",
+            _ => "an object",
+        };
+    }
+
+    private static Type? Find(string typeName) =>
+        typeof(JsonProblems).Assembly.GetType(typeName) ?? typeof(ProjectJson).Assembly.GetType(typeName)
+        ?? typeof(Statistics.Designs.Term).Assembly.GetType(typeName) ?? typeof(Intake.VariableKind).Assembly.GetType(typeName);
+
+    [GeneratedRegex(@"\s*Path: \$.*$", RegexOptions.Singleline)]
+    private static partial Regex PlaceSuffix();
+
+    [GeneratedRegex(@"^The JSON property '(?<name>.*)' could not be mapped to any \.NET member contained in type '(?<type>.*)'")]
+    private static partial Regex Unmapped();
+
+    [GeneratedRegex(@"was missing required properties including: (?<names>.*)$")]
+    private static partial Regex Missing();
+
+    [GeneratedRegex(@"^Duplicate property '(?<name>.*)' encountered")]
+    private static partial Regex Twice();
+
+    [GeneratedRegex(@"^The (constructor parameter|property or field) '(?<name>.*)' on type '.*' doesn't allow (setting )?null values")]
+    private static partial Regex Null();
+
+    [GeneratedRegex(@"^The JSON value could not be converted to (?<type>.*)\.$")]
+    private static partial Regex Unconverted();
+
+    [GeneratedRegex(@"^System\.Nullable`1\[(?<type>.*)\]$")]
+    private static partial Regex Nullable();
+}

@@ -1,0 +1,30 @@
+using Microsoft.AspNetCore.Diagnostics;
+
+namespace ModelLab.Web.Http;
+
+/// <summary>Turns whatever a request ends with into problem details.</summary>
+public sealed partial class ProblemExceptionHandler(ILogger<ProblemExceptionHandler> log) : IExceptionHandler
+{
+    /// <inheritdoc/>
+    public async ValueTask<bool> TryHandleAsync(HttpContext httpContext, Exception exception, CancellationToken cancellationToken)
+    {
+        if (exception is OperationCanceledException && httpContext.RequestAborted.IsCancellationRequested)
+        {
+            httpContext.Response.StatusCode = StatusCodes.Status499ClientClosedRequest;
+            return true;
+        }
+
+        var problem = ProblemTranslation.OfRefusal(httpContext, exception);
+        if (problem is null)
+        {
+            LogFault(exception, httpContext.Request.Method, httpContext.Request.Path, Problems.TraceId(httpContext));
+            problem = ProblemTranslation.OfFault(httpContext, exception);
+        }
+
+        await Problems.WriteAsync(httpContext, problem);
+        return true;
+    }
+
+    [LoggerMessage(LogLevel.Error, "{Method} {Path} failed, trace {TraceId}")]
+    private partial void LogFault(Exception exception, string method, string path, string traceId);
+}

@@ -1,0 +1,22 @@
+namespace ModelLab.Web.Http;
+
+/// <summary>Gives answers that the framework leaves empty (no such address, method not offered, ...) their problem details.</summary>
+public static class StatusProblems
+{
+    /// <summary>Writes the problem of an empty answer's status.</summary>
+    public static Task WriteAsync(HttpContext context)
+    {
+        var status = context.Response.StatusCode;
+        var (kind, detail) = status switch
+        {
+            StatusCodes.Status401Unauthorized => ("notSignedIn", "Sign in, or send an API token as Authorization: Bearer TOKEN."),
+            StatusCodes.Status403Forbidden => ("forbidden", "You may not do this."),
+            StatusCodes.Status404NotFound => ("notFound", $"There is nothing at {context.Request.Path}. The addresses are listed at /openapi/v1.json."),
+            StatusCodes.Status405MethodNotAllowed => ("method", $"{context.Request.Method} is not offered here; offered is {context.Response.Headers.Allow}."),
+            StatusCodes.Status406NotAcceptable => ("notAcceptable", "None of the media types asked for is offered here."),
+            StatusCodes.Status415UnsupportedMediaType => ("mediaType", "The body has a Content-Type that is not read here: application/json, for an upload multipart/form-data."),
+            _ => ("refused", "The request was not carried out."),
+        };
+        return Problems.WriteAsync(context, status, kind, detail);
+    }
+}

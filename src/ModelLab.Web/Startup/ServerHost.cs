@@ -1,0 +1,92 @@
+using Microsoft.Extensions.Configuration.Memory;
+using ModelLab.Web.Features.Health;
+using ModelLab.Web.Http;
+using ModelLab.Web.Settings;
+
+namespace ModelLab.Web.Startup;
+
+/// <summary>Puts the server together: settings, services, the order of what a request passes, endpoints.</summary>
+public static class ServerHost
+{
+    /// <summary>Where the server listens when the setting <c>urls</c> says nothing.</summary>
+    public const string DefaultAddress = "http://127.0.0.1:5240";
+
+    /// <summary>Builds the server; it does not run yet.</summary>
+    /// <exception cref="SettingsRefusedException">Settings are wrong.</exception>
+    public static WebApplication Build(string[] args)
+    {
+        var builder = CreateBuilder(args, out var settings);
+        builder.AddServerServices(settings);
+        var app = builder.Build();
+        app.UseServerPipeline();
+        app.MapServerEndpoints();
+        app.AnnounceWhenListening();
+        return app;
+    }
+
+    /// <summary>A builder with the program's defaults below all other sources of settings, and the settings read and checked.</summary>
+    /// <exception cref="SettingsRefusedException">Settings are wrong.</exception>
+    public static WebApplicationBuilder CreateBuilder(string[] args, out ServerSettings settings, bool logToStandardError = false)
+    {
+        var builder = WebApplication.CreateBuilder(args);
+        ((IConfigurationBuilder)builder.Configuration).Sources.Insert(0, new MemoryConfigurationSource { InitialData = Defaults });
+        builder.Logging.ClearProviders();
+        builder.Logging.AddSimpleConsole(o =>
+        {
+            o.SingleLine = true;
+            o.UseUtcTimestamp = true;
+            o.TimestampFormat = "yyyy-MM-dd'T'HH:mm:ss'Z' ";
+        });
+        if (logToStandardError)
+        {
+            builder.Services.Configure<Microsoft.Extensions.Logging.Console.ConsoleLoggerOptions>(o => o.LogToStandardErrorThreshold = LogLevel.Trace);
+        }
+
+        settings = ServerSettings.Read(builder.Configuration, builder.Environment);
+        builder.Services.AddSettings(settings);
+        return builder;
+    }
+
+    /// <summary>In memory and not in a file, so that they hold wherever the program is started from.</summary>
+    private static Dictionary<string, string?> Defaults => new()
+    {
+        [WebHostDefaults.ServerUrlsKey] = DefaultAddress,
+        ["Logging:LogLevel:Default"] = "Information",
+        ["Logging:LogLevel:Microsoft"] = "Warning",
+        ["Logging:LogLevel:Microsoft.Hosting.Lifetime"] = "Information",
+    };
+
+    private static void AddSettings(this IServiceCollection services, ServerSettings settings)
+    {
+        services.AddSingleton(settings);
+        services.AddSingleton(settings.Storage);
+        services.AddSingleton(settings.Uploads);
+        services.AddSingleton(settings.SignIn);
+        services.AddSingleton(settings.Tokens);
+        services.AddSingleton(settings.Proxies);
+    }
+
+    private static void AddServerServices(this WebApplicationBuilder builder, ServerSettings settings)
+    {
+        builder.WebHost.ConfigureKestrel(kestrel =>
+        {
+            kestrel.AddServerHeader = false;
+            kestrel.Limits.MaxRequestBodySize = settings.Storage.MaximumRequestBytes;
+        });
+        builder.Services.AddSingleton(TimeProvider.System);
+        builder.Services.AddSingleton<Readiness>();
+        builder.Services.AddHostedService<StartupWork>();
+        builder.Services.AddApiPlumbing();
+    }
+
+    private static void UseServerPipeline(this WebApplication app)
+    {
+        app.UseMiddleware<SecurityHeaders>();
+        app.UseExceptionHandler();
+        app.UseStatusCodePages(context => StatusProblems.WriteAsync(context.HttpContext));
+        app.UseMiddleware<ReadinessGate>();
+        app.UseMiddleware<CrossSiteRequests>();
+    }
+
+    private static void MapServerEndpoints(this WebApplication app) => app.MapHealth();
+}
