@@ -157,7 +157,8 @@ internal ref struct CanonicalScanner(ReadOnlySpan<byte> bytes)
             var stop = bytes[Position..].IndexOfAny(StringStops);
             if (stop < 0)
             {
-                throw Fault("this string does not end");
+                Position = bytes.Length;
+                throw Fault("the text breaks off within a string");
             }
 
             Position += stop;

@@ -2,7 +2,10 @@ using System.Numerics;
 
 namespace ModelLab.Ledger.Merkle;
 
-/// <summary>Shows that a tree is an earlier one with leaves appended, nothing before them changed (RFC 9162 section 2.1.4).</summary>
+/// <summary>
+/// Shows that a tree is an earlier one with leaves appended, nothing before them changed (RFC 9162 section 2.1.4). Sizes
+/// and roots must come from receipts: a proof does not bind the sizes by itself.
+/// </summary>
 /// <param name="FirstSize">Leaves in the earlier tree, at least 1.</param>
 /// <param name="SecondSize">Leaves in the later tree.</param>
 /// <param name="Path">Roots of subtrees that lead to both roots; empty where the sizes are equal.</param>

@@ -1,6 +1,9 @@
 namespace ModelLab.Ledger.Merkle;
 
-/// <summary>Shows that a leaf stands at its place in a tree of a known root (RFC 9162 section 2.1.3).</summary>
+/// <summary>
+/// Shows that a leaf stands at its place in a tree of a known root and size (RFC 9162 section 2.1.3). Both must come from
+/// a receipt: a proof does not bind the size by itself, since trees of other sizes can have the same turns on the way up.
+/// </summary>
 /// <param name="LeafIndex">Place of the leaf, from 0; an entry's number less one.</param>
 /// <param name="TreeSize">Leaves in the tree.</param>
 /// <param name="Path">Roots of the neighbouring subtrees from the leaf upwards.</param>

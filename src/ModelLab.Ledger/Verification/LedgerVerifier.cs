@@ -1,15 +1,17 @@
 using ModelLab.Ledger.Entries;
 using ModelLab.Ledger.Merkle;
+using ModelLab.Ledger.Receipts;
 
 namespace ModelLab.Ledger.Verification;
 
 /// <summary>
 /// Verifies stored bytes: form, ledger, numbers, chain, tree. Takes one entry at a time and keeps the frontier of the
-/// tree alone, so that the length of a ledger does not matter.
+/// tree alone, so that the length of a ledger does not matter. With receipts at hand, what they state is compared on the way.
 /// </summary>
 public sealed class LedgerVerifier
 {
     private readonly string ledgerId;
+    private readonly ReceiptComparison receipts;
     private readonly MerkleFrontier tree = new();
     private Sha256Hash last = Sha256Hash.Zero;
     private DateTimeOffset lastAt = DateTimeOffset.MinValue;
@@ -20,7 +22,20 @@ public sealed class LedgerVerifier
 
     /// <summary>Begins a verification of one ledger.</summary>
     /// <param name="ledgerId">The ledger all entries must name.</param>
-    public LedgerVerifier(string ledgerId) => this.ledgerId = ledgerId;
+    public LedgerVerifier(string ledgerId)
+        : this(ledgerId, [], new ReceiptVerifier())
+    {
+    }
+
+    /// <summary>Begins a verification of one ledger with receipts at hand.</summary>
+    /// <param name="ledgerId">The ledger all entries must name.</param>
+    /// <param name="receipts">Receipts kept apart from it, of any sizes in any order.</param>
+    /// <param name="receiptVerifier">Checks their signatures, with the server's keys pinned where they are known.</param>
+    public LedgerVerifier(string ledgerId, IReadOnlyList<Receipt> receipts, ReceiptVerifier receiptVerifier)
+    {
+        this.ledgerId = ledgerId;
+        this.receipts = new ReceiptComparison(ledgerId, receipts, receiptVerifier);
+    }
 
     private LedgerHead Head => new(ledgerId, tree.Count, last, tree.SubtreeRoots);
 
@@ -59,17 +74,23 @@ public sealed class LedgerVerifier
         lastAt = entry.At;
         last = MerkleHash.Leaf(canonicalBytes.Span);
         tree.Append(last);
+        receipts.Reached(tree, last);
     }
 
-    /// <summary>Ends it: compares with the stored head, where one is given (catches a cut tail).</summary>
+    /// <summary>
+    /// Ends it: compares with the stored head, where one is given (catches a cut tail), then says what the receipts told.
+    /// A receipt that does not fit makes the whole not ok.
+    /// </summary>
     public VerificationResult Finish(LedgerHead? storedHead = null)
     {
         var head = Head;
-        var fault = firstBad ?? (storedHead is null ? null : HeadComparison.Compare(head, storedHead));
+        var findings = receipts.Finish(tree.Count);
+        var fault = firstBad ?? (storedHead is null ? null : HeadComparison.Compare(head, storedHead)) ?? receipts.FirstDifference;
         return new VerificationResult(fault is null, entries, head, fault?.FirstBad, fault?.Problem)
         {
             StepsBackInTime = stepsBack,
             FirstStepBackInTime = firstStepBack,
+            Receipts = findings,
         };
     }
 

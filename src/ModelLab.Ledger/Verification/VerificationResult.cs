@@ -1,4 +1,5 @@
 using ModelLab.Ledger.Entries;
+using ModelLab.Ledger.Receipts;
 
 namespace ModelLab.Ledger.Verification;
 
@@ -21,4 +22,12 @@ public sealed record VerificationResult(bool Ok, long Entries, LedgerHead Head, 
 
     /// <summary>Number of the first entry dated before the one it follows, or null.</summary>
     public long? FirstStepBackInTime { get; init; }
+
+    /// <summary>What was found about each receipt given, in the order of the entries they count.</summary>
+    public IReadOnlyList<ReceiptFinding> Receipts { get; init; } = [];
 }
+
+/// <summary>A receipt held against a ledger.</summary>
+/// <param name="Receipt">The receipt.</param>
+/// <param name="Check">What was found.</param>
+public sealed record ReceiptFinding(Receipt Receipt, ReceiptCheck Check);
