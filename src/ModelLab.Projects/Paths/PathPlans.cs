@@ -1,0 +1,123 @@
+using ModelLab.Intake;
+using ModelLab.Intake.Csv;
+using ModelLab.Projects.Datasets;
+using ModelLab.Projects.Entries;
+using ModelLab.Statistics.Designs;
+using ModelLab.Statistics.Selection;
+
+namespace ModelLab.Projects.Paths;
+
+/// <summary>Checks what a path is asked to be, before any model is fitted.</summary>
+public static class PathPlans
+{
+    /// <summary>A whole-numbered outcome from zero with at most this many distinct values is questioned as a count (common practice).</summary>
+    public const int CountDistinct = 20;
+
+    /// <summary>Checks candidates, terms held in, rule, level and covariance.</summary>
+    /// <exception cref="RefusedException">Says what is wrong.</exception>
+    public static void Check(PathPlan plan)
+    {
+        if (plan.Candidates.Count == 0)
+        {
+            throw RefusedException.Invalid("Name at least one candidate term.", "terms");
+        }
+
+        var twice = plan.Candidates.GroupBy(t => t.Text, StringComparer.Ordinal).FirstOrDefault(g => g.Count() > 1);
+        if (twice is not null)
+        {
+            throw RefusedException.Invalid($"The term {twice.Key} is named twice.", "terms");
+        }
+
+        if (plan.Candidates.FirstOrDefault(t => t.Variables.Contains(plan.Outcome, StringComparer.Ordinal)) is { } circular)
+        {
+            throw RefusedException.Invalid($"The outcome '{plan.Outcome}' cannot explain itself: leave out the term {circular}.", "terms");
+        }
+
+        foreach (var term in plan.Candidates)
+        {
+            RequireLowerParts(term, plan.Candidates);
+        }
+
+        if (plan.HeldIn.FirstOrDefault(t => !plan.Candidates.Contains(t)) is { } stray)
+        {
+            throw RefusedException.Invalid($"{stray} is held in but is no candidate term.", "heldIn");
+        }
+
+        if (plan.Covariance != "classical")
+        {
+            throw RefusedException.Invalid($"The covariance '{plan.Covariance}' is not offered; there is 'classical'.", "covariance");
+        }
+
+        if (!(plan.Confidence is >= 0.5 and <= 0.9999))
+        {
+            throw RefusedException.Invalid("The confidence level lies between 0.5 and 0.9999, e.g. 0.95.", "confidence");
+        }
+
+        CheckRule(plan.Rule);
+    }
+
+    /// <summary>A power needs its lower powers beside it (marginality, Nelder 1977).</summary>
+    public static void RequireLowerParts(Term term, IReadOnlyList<Term> among)
+    {
+        if (term is PowerTerm power && LowerParts(power).FirstOrDefault(t => !among.Contains(t)) is { } lower)
+        {
+            throw RefusedException.Invalid($"{power} needs {lower} beside it: without its lower parts the curve would depend on where zero lies.", "terms");
+        }
+    }
+
+    /// <summary>A binary or count outcome is questioned and needs a reason.</summary>
+    public static void QuestionOutcome(PathPlan plan, DataDictionary dictionary, SourceContents contents)
+    {
+        if (dictionary.Find(plan.Outcome) is not { } variable || plan.OutcomeReason is not null)
+        {
+            return;
+        }
+
+        if (variable.Kind == VariableKind.Binary || variable.Distinct == 2)
+        {
+            throw RefusedException.Invalid(
+                $"'{plan.Outcome}' has two values. Least squares then gives differences in proportions: fitted values can leave the range, and spread is uneven by nature. "
+                + "Logistic regression is the usual method and is not offered here. If you want least squares all the same, say why in 'outcomeReason'.",
+                "outcomeReason");
+        }
+
+        if (IsCountLike(contents.Of(plan.Outcome)))
+        {
+            throw RefusedException.Invalid(
+                $"'{plan.Outcome}' looks like a count or a score: whole numbers from {contents.Of(plan.Outcome).Minimum:0} with {variable.Distinct} distinct values. "
+                + "Least squares can predict impossible values and its spread is likely to grow with the mean; count or ordinal regression is the usual method and is not offered here. "
+                + "If you want least squares all the same, say why in 'outcomeReason'.",
+                "outcomeReason");
+        }
+    }
+
+    private static bool IsCountLike(ColumnProfile column) => column is { Numeric: true, Whole: true, Minimum: >= 0, DistinctCapped: false, Distinct: <= CountDistinct };
+
+    private static IEnumerable<Term> LowerParts(PowerTerm power)
+    {
+        yield return new VariableTerm(power.Variable);
+        for (var degree = 2; degree < power.Degree; degree++)
+        {
+            yield return new PowerTerm(power.Variable, degree);
+        }
+    }
+
+    private static void CheckRule(RuleRecord? rule)
+    {
+        if (rule is null)
+        {
+            return;
+        }
+
+        if (rule.Criterion == Criterion.P && !(rule.RemoveAbove is > 0 and < 1))
+        {
+            throw RefusedException.Invalid(
+                "A rule by p needs 'removeAbove' between 0 and 1. No threshold is silent: 0.05 keeps little and favours what is strong by chance, 0.157 is about AIC for single columns.", "rule");
+        }
+
+        if (rule.Criterion != Criterion.P && rule.RemoveAbove is not null)
+        {
+            throw RefusedException.Invalid("'removeAbove' belongs to the criterion p alone.", "rule");
+        }
+    }
+}
