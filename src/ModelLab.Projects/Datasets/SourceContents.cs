@@ -20,6 +20,9 @@ public sealed class SourceContents
         return new SourceContents(EntryKinds.ReadSealed<IReadOnlyList<ColumnProfile>>(content, "columns") ?? []);
     }
 
+    /// <summary>The same of columns that are not recorded yet.</summary>
+    public static SourceContents Of(IReadOnlyList<ColumnProfile> columns) => new(columns);
+
     /// <summary>What was seen of a column.</summary>
     public ColumnProfile Of(string name) => byName[name];
 

@@ -1,0 +1,121 @@
+using ModelLab.Ledger.Entries;
+using ModelLab.Projects.Datasets;
+using ModelLab.Projects.Entries;
+using ModelLab.Projects.Paths;
+using ModelLab.Projects.Preparations;
+using ModelLab.Projects.Storage;
+using ModelLab.Projects.Views;
+using ModelLab.Statistics.Designs;
+
+namespace ModelLab.Projects.Revisions;
+
+/// <summary>Puts a recorded or a formed revision together with the names of its categories.</summary>
+public sealed class RevisionReader(IProjectStore store, ISourceVault vault)
+{
+    /// <summary>A recorded revision.</summary>
+    /// <exception cref="RefusedException">There is none, or its source was withdrawn.</exception>
+    public async Task<RevisionReading> ReadAsync(string projectId, string revisionId, CancellationToken cancellation)
+    {
+        var view = await store.ReadAsync(projectId, m => m.Find<RevisionView>(revisionId) ?? throw RefusedException.NotFound("such revision"), cancellation);
+        var entry = await store.EntryAsync(projectId, view.EntryNumber, cancellation);
+        return await ReadAsync(projectId, EntryKinds.Read<RevisionMade>(entry), entry, null, null, cancellation);
+    }
+
+    /// <summary>A revision that was formed and not recorded.</summary>
+    public Task<RevisionReading> PreviewAsync(string projectId, FormedRevision formed, CategoryLabels? labels, CancellationToken cancellation) =>
+        ReadAsync(projectId, formed.Body, null, formed, labels, cancellation);
+
+    private async Task<RevisionReading> ReadAsync(
+        string projectId, RevisionMade body, LedgerEntry? entry, FormedRevision? formed, CategoryLabels? labels, CancellationToken cancellation)
+    {
+        var state = await store.ReadAsync(projectId, m => Read(m, body, formed), cancellation);
+        var contents = await SourceContents.OpenAsync(vault, projectId, state.Dictionary.Dataset, cancellation);
+        var derived = state.Preparation is null
+            ? DerivedColumns.None
+            : await DerivedColumns.OpenAsync(vault, projectId, state.Preparation, labels, state.PreparationDictionary!, cancellation);
+        var names = new CategoryNames(state.Dictionary, contents, derived);
+        var plan = state.Path.Plan;
+        var byText = body.Terms.ToDictionary(t => t.Text, StringComparer.Ordinal);
+        var figures = body.Figures;
+        return new RevisionReading(
+            entry is null ? null : body.RevisionId, body.Number, body.PathId, entry?.Hash, entry?.Number,
+            Decision(body.Decision, entry), plan.Outcome, plan.Intercept, plan.Confidence, figures.Fit.N, body.Terms,
+            [.. figures.Terms.Select(t => new TermReading(
+                t.Term, t.Df, t.F, t.P, t.PartialRSquared, t.Vif, t.SumOfSquares, t.Removable, plan.HeldIn.Any(h => h.Text == t.Term), names.Reference(byText[t.Term])))],
+            [.. figures.Coefficients.Select(c => new CoefficientReading(
+                c.Term, c.Category is { } index ? names.Category(byText[c.Term], index) : null, c.Estimate, c.Lower, c.Upper, c.P, c.StandardError, c.T,
+                c.Standardized, c.PartialR, c.SemiPartialR, c.Vif))],
+            figures.Losses,
+            figures.Losses.Where(l => l.P is not null).MaxBy(l => l.P)?.Term,
+            figures.Fit, [], figures.Tied, state.Findings, body.PreparationId, body.Rows,
+            RevisionNotices.For(plan, body, [.. state.Earlier, body.Decision]), body.Fingerprint, body.Methods);
+    }
+
+    private static DecisionReading Decision(DecisionRecord d, LedgerEntry? entry) =>
+        new(d.Kind, d.Reason, d.Term?.Text, d.ByRule, d.Evidence, d.Rows, d.Cause, d.FromRevisionId, d.RuleSays, entry?.By, entry?.At);
+
+    private static State Read(IReadModel model, RevisionMade body, FormedRevision? formed)
+    {
+        var path = model.Find<PathView>(body.PathId) ?? formed!.After.Path;
+        var dataset = model.Find<DatasetView>(path.Plan.DatasetId)!;
+        var preparation = body.PreparationId is null ? null : model.Find<PreparationView>(body.PreparationId) ?? formed!.After.Preparation;
+        var findings = formed is null
+            ? model.All<FindingView>().Where(f => f.Finding.Place.Id == body.RevisionId).Select(f => new FindingReading(f.Id, f.Finding, f.State))
+            : formed.Acts.Select(a => a.Body).OfType<FindingRaised>().Select(f => new FindingReading(null, f.Finding, FindingState.Open));
+        return new State(
+            path,
+            DataDictionary.At(model, dataset, path.Plan.DictionaryEntry),
+            preparation,
+            preparation is null ? null : DataDictionary.At(model, dataset, preparation.DictionaryEntry),
+            [.. findings],
+            [.. Ancestry(model, path, body.Number)]);
+    }
+
+    /// <summary>The decisions before a revision, through the paths that side paths left.</summary>
+    private static IEnumerable<DecisionRecord> Ancestry(IReadModel model, PathView? path, int before)
+    {
+        while (path is not null)
+        {
+            var id = path.Id;
+            foreach (var revision in model.All<RevisionView>().Where(r => r.PathId == id && r.Number < before))
+            {
+                yield return revision.Decision;
+            }
+
+            var from = path.FromRevisionId is null ? null : model.Find<RevisionView>(path.FromRevisionId);
+            path = from is null ? null : model.Find<PathView>(from.PathId);
+            before = (from?.Number ?? 0) + 1;
+        }
+    }
+
+    private sealed record State(
+        PathView Path, DataDictionary Dictionary, PreparationView? Preparation, DataDictionary? PreparationDictionary,
+        IReadOnlyList<FindingReading> Findings, IReadOnlyList<DecisionRecord> Earlier);
+
+    private sealed class CategoryNames(DataDictionary dictionary, SourceContents contents, DerivedColumns derived)
+    {
+        public string Category(Term term, int index)
+        {
+            var name = term.Variables[0];
+            return derived.Makes(name) ? derived.Categories(name)[index] : contents.Categories(name)[index];
+        }
+
+        public string? Reference(Term term)
+        {
+            var name = term.Variables[0];
+            if (derived.Makes(name))
+            {
+                return derived.Categories(name)[derived.Reference(name)];
+            }
+
+            var variable = dictionary.Require(name);
+            if (Modelling.DatasetColumns.EntersAsNumber(variable, contents))
+            {
+                return null;
+            }
+
+            var categories = contents.Categories(name);
+            return variable.ReferenceCategory is { } index ? categories[index] : categories.First(c => !variable.MissingCodes.Contains(c, StringComparer.Ordinal));
+        }
+    }
+}
