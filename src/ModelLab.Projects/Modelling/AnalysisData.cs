@@ -21,7 +21,7 @@ public sealed record AnalysisData(
     SourceView Source, DataDictionary Dictionary, PreparationView? Preparation, DataTable Table, int[] Rows, AnalysedRows Facts, KeptContent RowsContent);
 
 /// <summary>Loads what a path's models are fitted on.</summary>
-public sealed class AnalysisDataLoader(IProjectStore store, ISourceVault vault, DatasetColumns columns)
+public sealed class AnalysisDataLoader(IReadModelSource store, ISourceVault vault, DatasetColumns columns)
 {
     /// <summary>Loads the data of a plan under a preparation.</summary>
     /// <exception cref="RefusedException">A variable is unknown, of a kind that cannot enter, or no row is left.</exception>

@@ -1,6 +1,7 @@
 using ModelLab.Projects.Entries;
 using ModelLab.Projects.Modelling;
 using ModelLab.Projects.People;
+using ModelLab.Projects.Revisions;
 using ModelLab.Projects.Storage;
 using ModelLab.Statistics.Designs;
 using ModelLab.Statistics.Selection;
@@ -10,10 +11,10 @@ namespace ModelLab.Projects.Paths;
 /// <summary>What the rule did.</summary>
 /// <param name="Revisions">The revisions added, in order; none where the rule stops at once.</param>
 /// <param name="Ending">Why it stopped, with the number that decided.</param>
-public sealed record ChosenByRule(IReadOnlyList<FormedRevision> Revisions, string Ending);
+public sealed record ChosenByRule(IReadOnlyList<RevisionReading> Revisions, string Ending);
 
 /// <summary>Runs the path's rule to its end: one term at a time, a refit and a revision a step, all recorded together.</summary>
-public sealed class ChooseByRule(ProjectGate gate, IProjectStore store, AnalysisDataLoader loader, PathDesk desk)
+public sealed class ChooseByRule(ProjectGate gate, IProjectStore store, AnalysisDataLoader loader, PathDesk desk, RevisionReader reader)
 {
     /// <summary>Runs it.</summary>
     /// <exception cref="RefusedException">The path has no rule, or went on meanwhile; nothing was stored.</exception>
@@ -45,10 +46,18 @@ public sealed class ChooseByRule(ProjectGate gate, IProjectStore store, Analysis
                 [data.RowsContent]);
         }
 
-        return chosen;
+        var readings = new List<RevisionReading>();
+        foreach (var revision in chosen.Revisions)
+        {
+            readings.Add(preview
+                ? await reader.PreviewAsync(projectId, revision, null, cancellation)
+                : await reader.ReadAsync(projectId, revision.Body.RevisionId, cancellation));
+        }
+
+        return new ChosenByRule(readings, chosen.Ending);
     }
 
-    private ChosenByRule Run(PathStanding standing, AnalysisData data, ChoosingRule rule, string reason, CancellationToken cancellation)
+    private Chain Run(PathStanding standing, AnalysisData data, ChoosingRule rule, string reason, CancellationToken cancellation)
     {
         var formed = new List<FormedRevision>();
         var results = RevisionFitter.Fit(data, standing.Path.Plan, standing.Terms, standing.Last!.FullModelMeanSquare).Results;
@@ -58,7 +67,7 @@ public sealed class ChooseByRule(ProjectGate gate, IProjectStore store, Analysis
             var choice = BackwardElimination.Choose(results, rule);
             if (!choice.Remove || (standing.Terms.Count == 1 && !standing.Path.Plan.Intercept))
             {
-                return new ChosenByRule(formed, choice.Remove ? "One term is left, and a model without intercept needs one." : choice.Explanation);
+                return new Chain(formed, choice.Remove ? "One term is left, and a model without intercept needs one." : choice.Explanation);
             }
 
             var term = choice.Weakest!.Term;
@@ -71,4 +80,6 @@ public sealed class ChooseByRule(ProjectGate gate, IProjectStore store, Analysis
             results = next.Fitted.Results;
         }
     }
+
+    private sealed record Chain(IReadOnlyList<FormedRevision> Revisions, string Ending);
 }

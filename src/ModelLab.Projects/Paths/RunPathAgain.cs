@@ -5,7 +5,6 @@ using ModelLab.Projects.People;
 using ModelLab.Projects.Preparations;
 using ModelLab.Projects.Storage;
 using ModelLab.Projects.Views;
-using ModelLab.Statistics.Designs;
 
 namespace ModelLab.Projects.Paths;
 

@@ -2,21 +2,18 @@ using ModelLab.Projects.Entries;
 using ModelLab.Projects.Modelling;
 using ModelLab.Projects.People;
 using ModelLab.Projects.Preparations;
+using ModelLab.Projects.Revisions;
 using ModelLab.Projects.Storage;
 using ModelLab.Projects.Views;
 using ModelLab.Statistics.Designs;
 
 namespace ModelLab.Projects.Paths;
 
-/// <summary>A decision formed, and recorded unless it was a preview.</summary>
-/// <param name="Revision">The revision.</param>
-/// <param name="Acts">All that was, or would be, recorded.</param>
-public sealed record TakenDecision(FormedRevision Revision, IReadOnlyList<Act> Acts);
-
 /// <summary>Takes one decision on a path: a refit and a revision, and for rows a new preparation, recorded together.</summary>
-public sealed class TakeDecision(ProjectGate gate, IProjectStore store, AnalysisDataLoader loader, PathDesk desk, PreparationBuilder preparations)
+public sealed class TakeDecision(
+    ProjectGate gate, IProjectStore store, AnalysisDataLoader loader, PathDesk desk, PreparationBuilder preparations, RevisionReader reader)
 {
-    /// <summary>Takes it.</summary>
+    /// <summary>Takes it and returns the new revision; of a preview, the revision that it would give.</summary>
     /// <param name="caller">Who.</param>
     /// <param name="projectId">The project.</param>
     /// <param name="pathId">The path.</param>
@@ -24,7 +21,7 @@ public sealed class TakeDecision(ProjectGate gate, IProjectStore store, Analysis
     /// <param name="preview">Compute and show, store nothing; needs no reason.</param>
     /// <param name="cancellation">Stops the work; nothing is stored then.</param>
     /// <exception cref="RefusedException">The decision cannot be taken, or the path went on meanwhile; nothing was stored.</exception>
-    public async Task<TakenDecision> ExecuteAsync(
+    public async Task<RevisionReading> ExecuteAsync(
         Caller caller, string projectId, string pathId, DecisionRequest request, bool preview, CancellationToken cancellation)
     {
         var admission = await gate.EnterAsync(caller, projectId, Role.Analyst, cancellation);
@@ -46,13 +43,13 @@ public sealed class TakeDecision(ProjectGate gate, IProjectStore store, Analysis
             DecisionKind.ExcludeRows or DecisionKind.RestoreRows => await WithRowsAsync(projectId, standing, request, reason, cancellation),
             _ => throw RefusedException.Invalid("A decision is one of remove, add, restart, excludeRows, restoreRows.", "kind"),
         };
-        if (!preview)
+        if (preview)
         {
-            await gate.RecordAsync(
-                admission, taken.Acts, m => PathDesk.RequireAfter(m, pathId, request.After), cancellation, [taken.Content]);
+            return await reader.PreviewAsync(projectId, taken.Revision, taken.Labels, cancellation);
         }
 
-        return new TakenDecision(taken.Revision, taken.Acts);
+        await gate.RecordAsync(admission, taken.Acts, m => PathDesk.RequireAfter(m, pathId, request.After), cancellation, [taken.Content]);
+        return await reader.ReadAsync(projectId, taken.Revision.Body.RevisionId, cancellation);
     }
 
     private static Term RequireTerm(DecisionRequest request) =>
@@ -66,7 +63,7 @@ public sealed class TakeDecision(ProjectGate gate, IProjectStore store, Analysis
     {
         var data = await loader.LoadAsync(projectId, standing.Path.Plan, standing.Preparation, cancellation);
         var formed = await Task.Run(() => desk.Form(standing, data, decision, terms), cancellation);
-        return new Formed(formed, formed.Acts, data.RowsContent);
+        return new Formed(formed, formed.Acts, data.RowsContent, null);
     }
 
     private async Task<Formed> RestartAsync(string projectId, PathStanding standing, DecisionRequest request, string reason, CancellationToken cancellation)
@@ -91,8 +88,8 @@ public sealed class TakeDecision(ProjectGate gate, IProjectStore store, Analysis
         var data = await loader.LoadAsync(projectId, plan, made, built.Labels, cancellation);
         var decision = new DecisionRecord(request.Kind!.Value, reason, Rows: built.Body.Steps[^1].Rows, Cause: request.Cause);
         var formed = await Task.Run(() => desk.Form(standing with { Preparation = made }, data, decision, standing.Terms), cancellation);
-        return new Formed(formed, [built.Act(reason), .. formed.Acts], data.RowsContent);
+        return new Formed(formed, [built.Act(reason), .. formed.Acts], data.RowsContent, built.Labels);
     }
 
-    private sealed record Formed(FormedRevision Revision, IReadOnlyList<Act> Acts, KeptContent Content);
+    private sealed record Formed(FormedRevision Revision, IReadOnlyList<Act> Acts, KeptContent Content, CategoryLabels? Labels);
 }

@@ -1,5 +1,4 @@
 using ModelLab.Projects.Entries;
-using ModelLab.Projects.Views;
 
 namespace ModelLab.Projects.Revisions;
 

@@ -40,14 +40,18 @@ public sealed record EntryBatch(
     string LedgerId, IReadOnlyList<EntryDraft> Drafts, Action<IReadModel> Guard,
     IReadOnlyList<KeptContent>? Contents = null, IReadOnlyList<string>? AdoptedSources = null);
 
+/// <summary>Where read models are read from: the store, or memory in a replay.</summary>
+public interface IReadModelSource
+{
+    /// <summary>Reads from one consistent state of a project's read model.</summary>
+    Task<T> ReadAsync<T>(string projectId, Func<IReadModel, T> read, CancellationToken cancellation);
+}
+
 /// <summary>The store of all projects: ledgers and read models, changed in one transaction.</summary>
-public interface IProjectStore
+public interface IProjectStore : IReadModelSource
 {
     /// <summary>The projects of which a person is a member, oldest first.</summary>
     Task<IReadOnlyList<ProjectView>> ProjectsOfAsync(string personId, CancellationToken cancellation);
-
-    /// <summary>Reads from one consistent state of a project's read model.</summary>
-    Task<T> ReadAsync<T>(string projectId, Func<IReadModel, T> read, CancellationToken cancellation);
 
     /// <summary>Appends a batch: guard, numbers, hashes, entries, sealed parts, read model and head in one transaction.</summary>
     Task<AppendedBatch> CommitAsync(EntryBatch batch, CancellationToken cancellation);

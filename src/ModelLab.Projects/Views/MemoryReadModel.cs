@@ -3,7 +3,7 @@ using ModelLab.Projects.Storage;
 namespace ModelLab.Projects.Views;
 
 /// <summary>A read model held in memory: for replay, for rebuilding, for tests.</summary>
-public sealed class MemoryReadModel : IReadModelWriter
+public sealed class MemoryReadModel : IReadModelWriter, IReadModelSource
 {
     private readonly Dictionary<Type, Dictionary<string, int>> places = [];
     private readonly Dictionary<Type, List<IView>> documents = [];
@@ -42,4 +42,7 @@ public sealed class MemoryReadModel : IReadModelWriter
             all.Add(view);
         }
     }
+
+    /// <inheritdoc/>
+    public Task<T> ReadAsync<T>(string projectId, Func<IReadModel, T> read, CancellationToken cancellation) => Task.FromResult(read(this));
 }

@@ -1,0 +1,56 @@
+using System.Text.Json;
+using System.Text.Json.Nodes;
+using ModelLab.Projects.Entries;
+
+namespace ModelLab.Projects.Replaying;
+
+/// <summary>The figures of a revision that a replay compares.</summary>
+public sealed record ComparedFigures(RevisionFigures Figures, double? FullModelMeanSquare);
+
+/// <summary>Compares figures one by one.</summary>
+public static class FigureComparison
+{
+    /// <summary>
+    /// The largest |a − b| / max(|a|, |b|) over all numbers, 0 where all bits agree; null where names, counts or missing values differ.
+    /// Comparing the written form compares every figure, those of later versions too.
+    /// </summary>
+    public static double? LargestRelativeDifference(ComparedFigures a, ComparedFigures b) =>
+        Compare(JsonSerializer.SerializeToNode(a, ProjectJson.Options), JsonSerializer.SerializeToNode(b, ProjectJson.Options));
+
+    private static double? Compare(JsonNode? a, JsonNode? b)
+    {
+        switch (a, b)
+        {
+            case (null, null):
+                return 0;
+            case (JsonObject x, JsonObject y) when x.Count == y.Count:
+                return Largest(x.Select(m => y.TryGetPropertyValue(m.Key, out var other) ? Compare(m.Value, other) : null));
+            case (JsonArray x, JsonArray y) when x.Count == y.Count:
+                return Largest(x.Zip(y, Compare));
+            case (JsonValue x, JsonValue y) when x.GetValueKind() == JsonValueKind.Number && y.GetValueKind() == JsonValueKind.Number:
+                return Relative(x.GetValue<double>(), y.GetValue<double>());
+            case (JsonValue x, JsonValue y):
+                return x.ToJsonString() == y.ToJsonString() ? 0 : null;
+            default:
+                return null;
+        }
+    }
+
+    private static double? Largest(IEnumerable<double?> differences)
+    {
+        double? largest = 0;
+        foreach (var difference in differences)
+        {
+            if (difference is null)
+            {
+                return null;
+            }
+
+            largest = Math.Max(largest.Value, difference.Value);
+        }
+
+        return largest;
+    }
+
+    private static double Relative(double a, double b) => a == b ? 0 : Math.Abs(a - b) / Math.Max(Math.Abs(a), Math.Abs(b));
+}
