@@ -24,12 +24,13 @@ public sealed class FittedModel
     internal FittedModel(LeastSquaresFit fit, FitOptions options)
     {
         this.fit = fit;
-        var terms = TermTests.Of(fit, options.HeldIn);
+        var coefficients = CoefficientFigures.Of(fit, options.Confidence);
+        var tests = TermTests.Of(fit, coefficients, options.HeldIn);
         Results = new ModelResults(
             FitFigures.Of(fit, options.FullModelMeanSquare),
-            CoefficientFigures.Of(fit, options.Confidence),
-            terms,
-            TermLosses.Of(fit, terms),
+            coefficients,
+            [.. tests.Select(test => test.Result)],
+            TermLosses.Of(fit, tests),
             AnalysisOfVariance.Of(fit));
     }
 

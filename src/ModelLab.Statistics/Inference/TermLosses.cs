@@ -1,4 +1,5 @@
 using ModelLab.Statistics.LeastSquares;
+using ModelLab.Statistics.Numerics;
 
 namespace ModelLab.Statistics.Inference;
 
@@ -9,26 +10,11 @@ namespace ModelLab.Statistics.Inference;
 internal static class TermLosses
 {
     /// <summary>The removable terms in their order.</summary>
-    public static IReadOnlyList<TermLoss> Of(LeastSquaresFit fit, IReadOnlyList<TermResult> terms)
+    public static IReadOnlyList<TermLoss> Of(LeastSquaresFit fit, IReadOnlyList<TermTest> tests) =>
+        [.. tests.Where(test => test.Result.Removable).Select(test => Of(fit, test.Result, test.Rise))];
+
+    private static TermLoss Of(LeastSquaresFit fit, TermResult term, DoubleDouble rise)
     {
-        var results = new List<TermLoss>();
-        var first = fit.Design.Specification.Intercept ? 1 : 0;
-        foreach (var term in terms)
-        {
-            if (term.Removable)
-            {
-                results.Add(Of(fit, term, first));
-            }
-
-            first += term.Df;
-        }
-
-        return results;
-    }
-
-    private static TermLoss Of(LeastSquaresFit fit, TermResult term, int first)
-    {
-        var rise = PartialFTest.SumOfSquares(fit, first, term.Df);
         var loss = new TermLoss(
             term.Term, term.Df, term.F, term.P, term.SumOfSquares, (rise / fit.TotalSumOfSquares).Hi, null, null, null, null);
         if (fit.IsExact)

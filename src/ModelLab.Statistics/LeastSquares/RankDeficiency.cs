@@ -10,20 +10,20 @@ namespace ModelLab.Statistics.LeastSquares;
 /// <para>
 /// With q the length of what is left of a column once its regression on the columns before it is taken out, the column counts as
 /// determined where q ≤ <see cref="Tolerance"/> · (length of the column about its mean; about zero without intercept) — that is, where
-/// the squared multiple correlation with those columns comes within 10⁻²⁸ of one — or where q is lost in the rounding of
+/// the squared multiple correlation with those columns comes within 10⁻²⁶ of one — or where q is lost in the rounding of
 /// double-double, q ≤ <see cref="RoundingTolerance"/> · (length about zero). Measured about the mean, a large level with small
 /// differences is no deficiency.
 /// </para>
 /// <para>
 /// The bound is far below what separates columns that differ as written: the powers 1 to 10 of the Filip set (the hardest of the
-/// published reference sets) come down to about 3·10⁻¹⁰, the Longley set to 3·10⁻². A total that was computed in double from its parts
-/// and written with 16 or 17 digits lies below the bound and is found.
+/// published reference sets) come down to 6·10⁻⁸, the Longley set to 4·10⁻². A total that was computed in double from its parts and
+/// written with 15 or more digits lies below the bound and is found.
 /// </para>
 /// </remarks>
 internal static class RankDeficiency
 {
     /// <summary>Smallest share of a column's length that must be its own.</summary>
-    public const double Tolerance = 1e-14;
+    public const double Tolerance = 1e-13;
 
     /// <summary>The same against the length about zero, where rounding of double-double takes over.</summary>
     public const double RoundingTolerance = 1e-26;

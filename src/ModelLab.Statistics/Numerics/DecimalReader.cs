@@ -18,8 +18,8 @@ public static class DecimalReader
     ];
 
     /// <summary>
-    /// Reads <c>[sign]digits[mark digits][e[sign]digits]</c>, nothing around it; the digits before the mark may be left out
-    /// (<c>.5</c>), those after it may not. Finite only; no thousands marks. A zero is positive whatever its sign.
+    /// Reads <c>[sign]digits[mark digits][e[sign]digits]</c>, nothing around it; the digits on one side of the mark may be left out
+    /// (<c>.5</c>, <c>760.</c>). Finite only; no thousands marks. A zero is positive whatever its sign.
     /// </summary>
     /// <param name="text">The characters (ASCII digits), at most <see cref="MaximumLength"/>.</param>
     /// <param name="decimalMark">'.' or ','.</param>
@@ -86,7 +86,7 @@ public static class DecimalReader
                 scan.Take(pendingZeros, digit);
                 pendingZeros = 0;
             }
-            else if (text[at] == decimalMark && !fraction && at + 1 < text.Length && char.IsAsciiDigit(text[at + 1]))
+            else if (text[at] == decimalMark && !fraction)
             {
                 fraction = true;
             }
