@@ -1,4 +1,5 @@
 using ModelLab.Ledger.Entries;
+using ModelLab.Ledger.Receipts;
 using ModelLab.Ledger.Verification;
 using Xunit;
 
@@ -72,9 +73,57 @@ public class LedgerVerifierTests
         Assert.Null(result.FirstBad);
     }
 
-    private static VerificationResult Verify(IEnumerable<LedgerEntry> entries, LedgerHead? head)
+    [Fact]
+    public void Receipts_are_held_against_the_entries_while_they_pass_and_each_is_answered_for()
+    {
+        var early = TestKeys.Signer.Sign(LedgerAppender.Append(LedgerHead.Empty(SmallLedger.Id), [.. SmallLedger.Drafts().Take(5)]).Head, TestKeys.SignedAt);
+        var foreign = TestKeys.Signer.Sign(SmallLedger.Form("another-ledger").Head, TestKeys.SignedAt);
+        var result = Verify(SmallLedger.Batch.Entries, SmallLedger.Batch.Head, TestKeys.Receipt, early);
+        Assert.True(result.Ok, result.Problem);
+        Assert.Equal([5L, 12L], result.Receipts.Select(r => r.Receipt.Count));
+        Assert.All(result.Receipts, r => Assert.True(r.Check is { Ok: true, KeyPinned: true }));
+
+        result = Verify(SmallLedger.Batch.Entries, SmallLedger.Batch.Head, early, foreign);
+        Assert.False(result.Ok);
+        Assert.Equal("A receipt is for the ledger 'another-ledger', not for '7f3c1d52-0a4e-4c39-9b0e-5d1f6a2b8c90'.", result.Problem);
+        Assert.Equal([true, false], result.Receipts.Select(r => r.Check.Ok));
+    }
+
+    [Fact]
+    public void A_ledger_rewritten_after_one_receipt_and_before_the_next_is_told_with_the_range()
+    {
+        var early = TestKeys.Signer.Sign(LedgerAppender.Append(LedgerHead.Empty(SmallLedger.Id), [.. SmallLedger.Drafts().Take(5)]).Head, TestKeys.SignedAt);
+        var drafts = SmallLedger.Drafts().ToArray();
+        drafts[6] = drafts[6] with { Reason = "Another reason" };
+        var rewritten = LedgerAppender.Append(LedgerHead.Empty(SmallLedger.Id), drafts);
+        var result = Verify(rewritten.Entries, rewritten.Head, early, TestKeys.Receipt);
+        Assert.False(result.Ok);
+        Assert.Equal(
+            "The entries are not those the receipt over 12 of them was given for: one of entries 6 to 12 was changed, left out or moved.",
+            result.Problem);
+        Assert.Equal([true, false], result.Receipts.Select(r => r.Check.Ok));
+    }
+
+    [Fact]
+    public void Entries_after_a_receipt_are_no_fault()
+    {
+        var grown = LedgerAppender.Append(SmallLedger.Batch.Head, SmallLedger.Drafts());
+        var result = Verify(SmallLedger.Batch.Entries.Concat(grown.Entries), grown.Head, TestKeys.Receipt);
+        Assert.True(result.Ok, result.Problem);
+        Assert.Equal(24, result.Head.Count);
+    }
+
+    [Fact]
+    public void What_is_wrong_with_the_form_of_an_entry_is_told_with_the_byte()
     {
         var verifier = new LedgerVerifier(SmallLedger.Id);
+        verifier.Add("{\"at\": 1}"u8.ToArray());
+        Assert.Equal("Entry 1 is not what an entry is stored as. Byte 6: \" should stand here.", verifier.Finish().Problem);
+    }
+
+    private static VerificationResult Verify(IEnumerable<LedgerEntry> entries, LedgerHead? head, params Receipt[] receipts)
+    {
+        var verifier = new LedgerVerifier(SmallLedger.Id, receipts, TestKeys.Verifier);
         foreach (var entry in entries)
         {
             verifier.Add(entry.CanonicalBytes);
