@@ -13,12 +13,12 @@ public class UpperTailTests(ITestOutputHelper output)
     [InlineData("normal", 20)]
     [InlineData("t", 130)]
     [InlineData("chi2", 100)]
-    [InlineData("f", 140)]
+    [InlineData("f", 220)]
     public void Every_tail_from_nearly_1_to_1e_300_has_15_digits(string distribution, int atLeast)
     {
         var rows = FixtureLines.Read("distributions/tails.csv").Where(row => row[0] == distribution).ToList();
         Assert.True(rows.Count >= atLeast, $"only {rows.Count} rows of {distribution}");
-        Assert.Contains(rows, row => Parse(row[4]) < 1e-100);
+        Assert.Contains(rows, row => Parse(row[4]) < 1e-290);
 
         var worst = LogRelativeError.Most;
         var offenders = new List<string>();
