@@ -79,7 +79,10 @@ internal static class DelimiterDetection
             });
             while (counts.Count <= MostRecords && records.Read())
             {
-                counts.Add(records.FieldCount);
+                if (records.FieldCount > 1 || records.RawRecord.IndexOfAnyExcept((byte)' ', (byte)'\t') >= 0)
+                {
+                    counts.Add(records.FieldCount);
+                }
             }
 
             if (!complete && counts.Count is > 1 and <= MostRecords)

@@ -13,12 +13,19 @@ internal static class MissingTexts
         [.. new[] { ".", "-", "?", "NA", "na", "N/A", "n/a", "NaN", "nan", "null", "NULL", "Null" }.Select(Encoding.UTF8.GetBytes)];
 
     /// <summary>Whether a cell, spaces around it left out, is missing.</summary>
-    internal static bool IsMissing(ReadOnlySpan<byte> cell)
+    internal static bool IsMissing(ReadOnlySpan<byte> cell) => IsMissingTrimmed(CellText.Trim(cell));
+
+    /// <summary>Whether a cell without spaces around it is missing.</summary>
+    internal static bool IsMissingTrimmed(ReadOnlySpan<byte> text)
     {
-        var text = CellText.Trim(cell);
         if (text.Length is 0 or > 4)
         {
             return text.Length == 0;
+        }
+
+        if (char.IsAsciiDigit((char)text[0]))
+        {
+            return false;
         }
 
         foreach (var missing in Texts)

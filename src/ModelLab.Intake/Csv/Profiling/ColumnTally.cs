@@ -50,11 +50,14 @@ internal sealed class ColumnTally(string name, int distinctCap)
     /// <summary>Row of the first such text.</summary>
     internal long FirstSpacedRow { get; private set; }
 
-    /// <summary>Numbers with a unit, currency or per cent sign.</summary>
-    internal long WithUnit { get; private set; }
+    /// <summary>Distinct values that are numbers with a unit, currency or per cent sign.</summary>
+    internal long DistinctWithUnit { get; private set; }
 
     /// <summary>Cells that are not missing.</summary>
     internal long Present => Plain.Count + Point.Count + Comma.Count + Grouped + Texts;
+
+    /// <summary>Whether most values are numbers under one mark or the other.</summary>
+    internal bool MostlyNumbers => Plain.Count + Point.Count + Comma.Count > Present / 2;
 
     /// <summary>Distinct values.</summary>
     internal DistinctTally Distinct { get; } = new(distinctCap);
@@ -74,14 +77,14 @@ internal sealed class ColumnTally(string name, int distinctCap)
     /// <summary>Notes a cell.</summary>
     internal void Add(ReadOnlySpan<byte> cell, long row)
     {
-        if (Csv.MissingTexts.IsMissing(cell))
+        var text = CellText.Trim(cell);
+        if (Csv.MissingTexts.IsMissingTrimmed(text))
         {
-            AddMissing(CellText.Trim(cell));
+            AddMissing(text);
             return;
         }
 
-        var shape = CellShape.Of(cell);
-        var text = CellText.Trim(cell);
+        var shape = CellShape.OfTrimmed(text);
         switch (shape.Form)
         {
             case NumberForm.Plain:
@@ -97,7 +100,7 @@ internal sealed class ColumnTally(string name, int distinctCap)
                 FirstGroupedRow = Grouped++ == 0 ? row : FirstGroupedRow;
                 break;
             default:
-                AddText(cell, text, row);
+                AddText(cell.Length != text.Length, row);
                 break;
         }
 
@@ -108,12 +111,17 @@ internal sealed class ColumnTally(string name, int distinctCap)
             Suspects.Add(shape.Value, shape.Whole);
         }
 
-        Dates.Add(text);
+        // a number with a decimal mark is no date
+        if (shape.Form is NumberForm.None or NumberForm.Plain or NumberForm.Grouped)
+        {
+            Dates.Add(text);
+        }
 
         // a text keeps the spaces that RFC 4180 counts as its own, a number does not
         if (Distinct.Add(shape.IsNumber ? text : cell))
         {
             Signs.Add(text, shape.Form);
+            DistinctWithUnit += shape.Form == NumberForm.None && UnitBesideNumber.Is(text) ? 1 : 0;
         }
     }
 
@@ -126,14 +134,12 @@ internal sealed class ColumnTally(string name, int distinctCap)
         }
     }
 
-    private void AddText(ReadOnlySpan<byte> cell, ReadOnlySpan<byte> text, long row)
+    private void AddText(bool spaced, long row)
     {
         FirstTextRow = Texts++ == 0 ? row : FirstTextRow;
-        if (text.Length != cell.Length)
+        if (spaced)
         {
             FirstSpacedRow = Spaced++ == 0 ? row : FirstSpacedRow;
         }
-
-        WithUnit += UnitBesideNumber.Is(text) ? 1 : 0;
     }
 }

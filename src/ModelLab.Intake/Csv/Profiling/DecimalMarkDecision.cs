@@ -5,8 +5,8 @@ namespace ModelLab.Intake.Csv.Profiling;
 
 /// <summary>
 /// Decides the decimal mark of a file from all its rows, and refuses numbers that no mark explains. Only columns that hold nothing but
-/// numbers speak. A comma decides where more columns need it than need the point; the columns of the other mark are then read as
-/// texts and questioned. One column with both marks, and thousands marks, are refused: a guess there would change a figure a thousandfold.
+/// numbers speak, and first those with a mark that cannot separate thousands. The mark that more columns need decides; the columns of the
+/// other mark are then read as texts and questioned. One column with both marks, and thousands marks, are refused: a guess there would change a figure a thousandfold.
 /// </summary>
 internal static class DecimalMarkDecision
 {
@@ -22,12 +22,17 @@ internal static class DecimalMarkDecision
         }
 
         var numbers = columns.Where(c => c.Texts == 0 && c.Grouped == 0).ToArray();
-        var point = numbers.Count(c => c.Point.Count > 0 && c.Comma.Count == 0);
+        var point = numbers.Where(c => c.Point.Count > 0 && c.Comma.Count == 0).ToArray();
         var comma = numbers.Where(c => c.Comma.Count > 0 && c.Point.Count == 0).ToArray();
+        var surePoint = point.Count(c => c.Point.GroupLike < c.Point.Count);
+        var sureComma = comma.Count(c => c.Comma.GroupLike < c.Comma.Count);
+        if (surePoint != sureComma)
+        {
+            return sureComma > surePoint ? ',' : '.';
+        }
 
-        // where all commas could separate thousands, only a delimiter other than the comma makes decimals of them
-        var commaIsSure = comma.Any(c => c.Comma.GroupLike < c.Comma.Count) || (point == 0 && delimiter != ',');
-        return comma.Length > point && commaIsSure ? ',' : '.';
+        // semicolons stand between cells where the comma is the decimal mark; commas that could all separate thousands are decimals only there
+        return comma.Length > 0 && (surePoint > 0 ? delimiter == ';' : point.Length == 0 && delimiter != ',') ? ',' : '.';
     }
 
     /// <summary>The numbers of a column that carry the decimal mark of the file.</summary>

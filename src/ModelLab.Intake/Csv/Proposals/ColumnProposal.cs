@@ -29,7 +29,7 @@ internal static class ColumnProposal
             kind = kind == VariableKind.Date ? kind : VariableKind.Identifier;
         }
 
-        if (MissingCodeSuspicion.Ask(column, numeric, view.Values) is { } missing)
+        if (kind != VariableKind.Identifier && MissingCodeSuspicion.Ask(column, numeric, view.Values) is { } missing)
         {
             questions.Add(missing);
         }

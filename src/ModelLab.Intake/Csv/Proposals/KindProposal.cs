@@ -127,6 +127,12 @@ internal static class KindProposal
     private static VariableKind OfTexts(ColumnView view, List<IntakeQuestion> questions)
     {
         var column = view.Tally;
+        if (column.MostlyNumbers)
+        {
+            // a measure with a few stray texts, which TextQuestions asks about
+            return VariableKind.Categorical;
+        }
+
         if (view.AllDistinct)
         {
             questions.Add(IdentifierQuestion(view, "With texts that never repeat"));

@@ -17,8 +17,7 @@ internal static class MissingCodeSuspicion
         var suspects = numeric
             ? column.Suspects.Apart()
             : [.. values.Select(v => v.Value).Where(v => Words.Contains(v.Trim()))];
-        var mostlyNumbers = !numeric && column.Plain.Count + column.Point.Count + column.Comma.Count > column.Present / 2;
-        if (mostlyNumbers)
+        if (!numeric && column.MostlyNumbers)
         {
             suspects = [.. suspects, .. column.Suspects.Apart()];
         }

@@ -13,8 +13,14 @@ internal sealed class SuspectNumbers
     private const double ClearShareOfRange = 0.1;
     private const double ClearStep = 2;
 
+    // one nine among small numbers is more often a nine
+    private const int FewestNines = 2;
+
     private static readonly double[] Usual =
         [-9999, -999, -998, -997, -99, -98, -97, -88, -77, -9, -8, -7, -1, 9, 99, 88, 77, 98, 97, 999, 998, 997, 888, 777, 9999, 8888, 99999, 999999];
+
+    private const int TableReach = 9999;
+    private static readonly sbyte[] Places = [.. Enumerable.Range(-TableReach, (2 * TableReach) + 1).Select(v => (sbyte)Array.IndexOf(Usual, v))];
 
     private readonly long[] counts = new long[Usual.Length];
     private double minimum = double.PositiveInfinity;
@@ -23,9 +29,9 @@ internal sealed class SuspectNumbers
     /// <summary>Sees a number.</summary>
     internal void Add(double value, bool whole)
     {
-        if (whole && value is >= -9999 and <= 999999)
+        if (whole && value is >= -TableReach and <= 999999)
         {
-            var index = Array.IndexOf(Usual, value);
+            var index = value <= TableReach ? Places[(int)value + TableReach] : Array.IndexOf(Usual, value);
             if (index >= 0)
             {
                 counts[index]++;
@@ -46,7 +52,7 @@ internal sealed class SuspectNumbers
         }
 
         var step = Math.Max(ClearStep, ClearShareOfRange * (maximum - minimum));
-        return [.. Usual.Where((value, i) => counts[i] > 0 && IsApart(value, step)).Order().Select(v => v.ToString(CultureInfo.InvariantCulture))];
+        return [.. Usual.Where((value, i) => counts[i] >= (value == 9 ? FewestNines : 1) && IsApart(value, step)).Order().Select(v => v.ToString(CultureInfo.InvariantCulture))];
     }
 
     private bool IsApart(double value, double step) =>

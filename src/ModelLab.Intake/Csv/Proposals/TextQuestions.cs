@@ -14,14 +14,13 @@ internal static class TextQuestions
             yield break;
         }
 
-        var numbers = column.Plain.Count + column.Point.Count + column.Comma.Count;
-        if (numbers > column.Present / 2 && column.Dates.Iso + column.Dates.YearLast < column.Texts)
+        if (column.MostlyNumbers && column.Dates.Iso + column.Dates.YearLast < column.Texts)
         {
             yield return new IntakeQuestion("numbers-with-texts", string.Create(CultureInfo.InvariantCulture,
                 $"Most values are numbers, but {column.Texts + column.Grouped} of {column.Present} are not (first in row {column.FirstTextRow}), so the column is read as texts. Is it a number? Then correct these cells in the file, or name their text as a missing code."));
         }
 
-        if (column.WithUnit > column.Present / 2)
+        if (column.DistinctWithUnit > column.Distinct.Distinct / 2)
         {
             yield return new IntakeQuestion("number-with-unit", string.Create(CultureInfo.InvariantCulture,
                 $"The values look like numbers with a unit or a sign (first in row {column.FirstTextRow}). Is it a number? Then write the figures alone in the file and keep the unit in the data dictionary."));

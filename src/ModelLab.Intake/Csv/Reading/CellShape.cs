@@ -38,9 +38,11 @@ internal readonly record struct CellShape(NumberForm Form, double Value, bool Wh
     internal bool IsNumber => Form is NumberForm.Plain or NumberForm.Point or NumberForm.Comma;
 
     /// <summary>Looks at a cell, spaces around it left out: <c>[sign]digits[mark digits][e[sign]digits]</c>, where digits on one side of the mark are enough.</summary>
-    internal static CellShape Of(ReadOnlySpan<byte> cell)
+    internal static CellShape Of(ReadOnlySpan<byte> cell) => OfTrimmed(CellText.Trim(cell));
+
+    /// <summary>As <see cref="Of"/>, for a cell without spaces around it.</summary>
+    internal static CellShape OfTrimmed(ReadOnlySpan<byte> text)
     {
-        var text = CellText.Trim(cell);
         var i = text.Length > 0 && text[0] is (byte)'+' or (byte)'-' ? 1 : 0;
         if (i == text.Length || text.Length > NumberCell.MostCharacters || !(char.IsAsciiDigit((char)text[i]) || text[i] is (byte)'.' or (byte)','))
         {
