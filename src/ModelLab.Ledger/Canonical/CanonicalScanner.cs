@@ -121,7 +121,7 @@ internal ref struct CanonicalScanner(ReadOnlySpan<byte> bytes)
     }
 
     /// <summary>Takes a string and gives its text.</summary>
-    public string String() => Decode(RawString());
+    public string String() => CanonicalString.Decode(RawString());
 
     /// <summary>Takes a number and gives it.</summary>
     public double Number() => double.Parse(RawNumber(), NumberStyles.Float, CultureInfo.InvariantCulture);
@@ -195,25 +195,12 @@ internal ref struct CanonicalScanner(ReadOnlySpan<byte> bytes)
             return;
         }
 
-        if (!EscapedControl(bytes[Position..], out var control) || control is 8 or 9 or 10 or 12 or 13)
+        if (!CanonicalString.EscapedControl(bytes[Position..], out var control) || control is 8 or 9 or 10 or 12 or 13)
         {
             throw Fault("canonical form does not escape in this way");
         }
 
         Position += 6;
-    }
-
-    private static bool EscapedControl(ReadOnlySpan<byte> escape, out byte control)
-    {
-        control = 0;
-        if (escape.Length < 6 || !escape.StartsWith("\\u00"u8) || escape[4] is not ((byte)'0' or (byte)'1'))
-        {
-            return false;
-        }
-
-        var low = "0123456789abcdef"u8.IndexOf(escape[5]);
-        control = (byte)(((escape[4] - '0') << 4) | (low & 15));
-        return low >= 0;
     }
 
     private ReadOnlySpan<byte> RawNumber()
@@ -256,38 +243,9 @@ internal ref struct CanonicalScanner(ReadOnlySpan<byte> bytes)
     private static int CompareKeys(ReadOnlySpan<byte> left, ReadOnlySpan<byte> right) =>
         IsPlain(left) && IsPlain(right)
             ? left.SequenceCompareTo(right)
-            : string.CompareOrdinal(Decode(left), Decode(right));
+            : string.CompareOrdinal(CanonicalString.Decode(left), CanonicalString.Decode(right));
 
     private static bool IsPlain(ReadOnlySpan<byte> raw) => Ascii.IsValid(raw) && !raw.Contains((byte)'\\');
-
-    private static string Decode(ReadOnlySpan<byte> raw)
-    {
-        if (!raw.Contains((byte)'\\'))
-        {
-            return Encoding.UTF8.GetString(raw);
-        }
-
-        var plain = new byte[raw.Length];
-        var count = 0;
-        for (var i = 0; i < raw.Length; i++)
-        {
-            if (raw[i] != '\\')
-            {
-                plain[count++] = raw[i];
-            }
-            else if (EscapedControl(raw[i..], out var control))
-            {
-                plain[count++] = control;
-                i += 5;
-            }
-            else
-            {
-                plain[count++] = CanonicalString.Unescape(raw[++i]);
-            }
-        }
-
-        return Encoding.UTF8.GetString(plain.AsSpan(0, count));
-    }
 
     private readonly void CheckDepth(int depth)
     {

@@ -46,6 +46,50 @@ internal static class CanonicalString
         _ => 0,
     };
 
+    /// <summary>Whether bytes begin with the escape of a control character by its number, <c>\u00xx</c> in lower case.</summary>
+    public static bool EscapedControl(ReadOnlySpan<byte> escape, out byte control)
+    {
+        control = 0;
+        if (escape.Length < 6 || !escape.StartsWith("\\u00"u8) || escape[4] is not ((byte)'0' or (byte)'1'))
+        {
+            return false;
+        }
+
+        var low = "0123456789abcdef"u8.IndexOf(escape[5]);
+        control = (byte)(((escape[4] - '0') << 4) | (low & 15));
+        return low >= 0;
+    }
+
+    /// <summary>The text of the bytes between two quotes, which have been seen to be canonical.</summary>
+    public static string Decode(ReadOnlySpan<byte> raw)
+    {
+        if (!raw.Contains((byte)'\\'))
+        {
+            return Encoding.UTF8.GetString(raw);
+        }
+
+        var plain = new byte[raw.Length];
+        var count = 0;
+        for (var i = 0; i < raw.Length; i++)
+        {
+            if (raw[i] != '\\')
+            {
+                plain[count++] = raw[i];
+            }
+            else if (EscapedControl(raw[i..], out var control))
+            {
+                plain[count++] = control;
+                i += 5;
+            }
+            else
+            {
+                plain[count++] = Unescape(raw[++i]);
+            }
+        }
+
+        return Encoding.UTF8.GetString(plain.AsSpan(0, count));
+    }
+
     private static void WritePlain(ReadOnlySpan<char> text, IBufferWriter<byte> to)
     {
         if (text.IsEmpty)

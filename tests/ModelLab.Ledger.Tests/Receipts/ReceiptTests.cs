@@ -3,6 +3,7 @@ using System.Text;
 using ModelLab.Ledger.Entries;
 using ModelLab.Ledger.Merkle;
 using ModelLab.Ledger.Receipts;
+using ModelLab.Ledger.Tests.Tampering;
 using Xunit;
 
 namespace ModelLab.Ledger.Tests.Receipts;
@@ -116,6 +117,18 @@ public class ReceiptTests
         var proof = InclusionProof.Make([.. batch.Entries.Select(e => e.Hash)], 2) with { LeafIndex = 1, TreeSize = 2 };
         Assert.True(proof.Verify(last.Hash, receipt.Root));
         Assert.False(TestKeys.Verifier.CheckInclusion(receipt, last.CanonicalBytes.Span, proof).Ok);
+    }
+
+    [Fact]
+    public void A_receipt_signed_over_a_head_whose_last_hash_is_another_does_not_fit()
+    {
+        var receipt = TestKeys.Signer.Sign(SmallLedger.Batch.Head with { LastHash = Sha256Hash.Of([]) }, TestKeys.SignedAt);
+        Assert.True(TestKeys.Verifier.CheckSignature(receipt).Ok);
+        Assert.False(TestKeys.Verifier.CheckEntries(receipt, SmallLedger.Id, [.. SmallLedger.Batch.Entries.Select(e => e.Hash)]).Ok);
+        Assert.False(LedgerTampering.Verify(SmallLedger.Batch.Entries.Select(e => e.CanonicalBytes.ToArray()), null, receipt).Ok);
+        var same = ConsistencyProof.Make([.. SmallLedger.Batch.Entries.Select(e => e.Hash)], 12);
+        Assert.False(TestKeys.Verifier.CheckConsistency(receipt, TestKeys.Receipt, same).Ok);
+        Assert.True(TestKeys.Verifier.CheckConsistency(TestKeys.Receipt, TestKeys.Receipt, same).Ok);
     }
 
     [Fact]

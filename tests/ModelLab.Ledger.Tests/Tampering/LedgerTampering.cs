@@ -84,7 +84,7 @@ internal static class LedgerTampering
                 text.Replace($"\"number\":{k + 1}", $"\"number\":0{k + 1}", StringComparison.Ordinal),
                 text.Replace($"\"number\":{k + 1}", $"\"number\":\"{k + 1}\"", StringComparison.Ordinal),
                 text.Replace("00Z\"", "00+00:00\"", StringComparison.Ordinal).Replace("0Z\"", "0z\"", StringComparison.Ordinal),
-                text.Insert(text.Length - 1, ",\"zusatz\":null"),
+                text.Insert(text.Length - 1, ",\"zz\":null"),
                 text.Insert(1, "\"aa\":1,"),
                 text.Replace("},\"kind\"", ",\"z\":1},\"kind\"", StringComparison.Ordinal),
                 text.Replace("\"previous\":\"", "\"previous\":\"A", StringComparison.Ordinal),
