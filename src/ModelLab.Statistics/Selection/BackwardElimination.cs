@@ -171,8 +171,9 @@ public static class BackwardElimination
             Criterion.Bic => ("BIC", weakest.BicChange, "lowest"),
             _ => ("adjusted R²", weakest.AdjustedRSquaredChange, "highest"),
         };
+        var sign = change > 0.0 ? "+" : "";
         return string.Create(
             culture,
-            $"Without {weakest.Term} {name} is {better} of all removals, {change:+0.####;-0.####;+0} against now, {(remove ? "no worse: it is removed" : "worse: nothing is removed")}.");
+            $"Without {weakest.Term} {name} is {better} of all removals, {sign}{change:G3} against now: {(remove ? "it is removed" : "nothing is removed")}.");
     }
 }
