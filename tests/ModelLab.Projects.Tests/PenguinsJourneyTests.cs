@@ -1,12 +1,9 @@
 using ModelLab.Intake;
-using ModelLab.Ledger.Verification;
 using ModelLab.Projects.Datasets;
 using ModelLab.Projects.Entries;
 using ModelLab.Projects.Paths;
 using ModelLab.Projects.Records;
 using ModelLab.Projects.Replaying;
-using ModelLab.Projects.Revisions;
-using ModelLab.Projects.Sources;
 using ModelLab.Projects.Tests.Hosting;
 using ModelLab.Statistics.Selection;
 
