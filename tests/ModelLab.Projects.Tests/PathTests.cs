@@ -10,7 +10,6 @@ using ModelLab.Projects.Replaying;
 using ModelLab.Projects.Revisions;
 using ModelLab.Projects.Tests.Hosting;
 using ModelLab.Projects.Views;
-using ModelLab.Statistics.Designs;
 
 namespace ModelLab.Projects.Tests;
 
@@ -48,7 +47,7 @@ public sealed class PathTests : IDisposable
         Assert.Equal(first.Fit, again.Fit);
         Assert.Equal(first.Fingerprint, again.Fingerprint);
         Assert.Equal(3, again.Number);
-        Assert.Equal(without.Fit.Cp, RecomputedCp(first, without), 1e-9);
+        Assert.Equal(RecomputedCp(first, without), without.Fit.Cp!.Value, 1e-9);
     }
 
     [Fact]
@@ -159,14 +158,20 @@ public sealed class PathTests : IDisposable
     [Fact]
     public async Task Tied_predictors_are_found_accepted_and_gone_with_their_cause()
     {
-        var (project, first, _) = await PenguinsAsync();
-        var finding = Assert.Single((await bench.Get<ManageFindings>().AllAsync(Bench.Analyst, project, Bench.Stop)), f => f.Finding.Rule == "tied-predictors");
+        // Two measures of size (r 0.99), one of age.
+        var project = await bench.ProjectAsync();
+        var rows = string.Join('\n', Enumerable.Range(1, 30).Select(i => $"{100 + (i * 7 % 13)}.5,{i}.25,{(2 * i) + (i % 3)}.75,{i * 11 % 17}.5"));
+        var source = await bench.SourceAsync(project, "saved,area,volume,age\n" + rows + "\n");
+        var path = await bench.PathAsync(project, Bench.Start(source.Dataset.Id, "saved", "area", "volume", "age"));
+        var finding = Assert.Single(path.Revisions[0].Findings);
+        Assert.Equal("tied-predictors", finding.Finding.Rule);
+        Assert.Equal(["area", "volume"], finding.Finding.Subject);
         Assert.Equal(FindingState.Open, finding.State);
-        var second = await bench.DecideAsync(project, first, DecisionKind.Remove, "island");
+        var second = await bench.DecideAsync(project, path.Revisions[0], DecisionKind.Remove, "age");
         Assert.Empty(second.Findings);
-        await bench.Get<ManageFindings>().AcceptAsync(Bench.Analyst, project, finding.Id, "both measure size", Bench.Stop);
-        await bench.DecideAsync(project, second, DecisionKind.Remove, finding.Finding.Subject[0]);
-        var now = (await bench.Get<ManageFindings>().AllAsync(Bench.Analyst, project, Bench.Stop)).Single(f => f.Id == finding.Id);
+        await bench.Get<ManageFindings>().AcceptAsync(Bench.Analyst, project, finding.Id!, "both measure size", Bench.Stop);
+        await bench.DecideAsync(project, second, DecisionKind.Remove, "volume");
+        var now = Assert.Single(await bench.Get<ManageFindings>().AllAsync(Bench.Analyst, project, Bench.Stop));
         Assert.Equal(FindingState.Gone, now.State);
     }
 

@@ -66,7 +66,7 @@ public sealed class RoleTests : IDisposable
         string[] beside = ["OpenProject.ExecuteAsync", "ReadProjects.AllAsync", "ProjectGate.PersonAsync", "ProjectGate.EnterAsync"];
         var methods = typeof(OpenProject).Assembly.GetExportedTypes()
             .SelectMany(t => t.GetMethods(BindingFlags.Public | BindingFlags.Instance | BindingFlags.Static | BindingFlags.DeclaredOnly))
-            .Where(m => m.GetParameters().Any(p => p.ParameterType == typeof(Caller)))
+            .Where(m => m.DeclaringType != typeof(Caller) && m.GetParameters().Any(p => p.ParameterType == typeof(Caller)))
             .Select(m => $"{m.DeclaringType!.Name}.{m.Name}")
             .Distinct()
             .ToList();

@@ -10,7 +10,7 @@ namespace ModelLab.Projects.Paths;
 /// <summary>Checks what a path is asked to be, before any model is fitted.</summary>
 public static class PathPlans
 {
-    /// <summary>A whole-numbered outcome from zero with at most this many distinct values is questioned as a count (common practice).</summary>
+    /// <summary>A whole-numbered outcome that begins at 0 or 1 and has at most this many distinct values is questioned as a count (common practice).</summary>
     public const int CountDistinct = 20;
 
     /// <summary>Checks candidates, terms held in, rule, level and covariance.</summary>
@@ -91,7 +91,7 @@ public static class PathPlans
         }
     }
 
-    private static bool IsCountLike(ColumnProfile column) => column is { Numeric: true, Whole: true, Minimum: >= 0, DistinctCapped: false, Distinct: <= CountDistinct };
+    private static bool IsCountLike(ColumnProfile column) => column is { Numeric: true, Whole: true, Minimum: 0 or 1, DistinctCapped: false, Distinct: <= CountDistinct };
 
     private static IEnumerable<Term> LowerParts(PowerTerm power)
     {
