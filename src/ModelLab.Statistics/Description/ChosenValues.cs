@@ -81,6 +81,6 @@ internal sealed class ChosenValues
             }
         }
 
-        return ranked ? CentredValues.Of(MeanRanks.Of(v, r), new double[v.Length]) : CentredValues.Of(v, r);
+        return ranked ? CentredValues.Of(MeanRanks.Of(v, r), null) : CentredValues.Of(v, r);
     }
 }
