@@ -1,12 +1,19 @@
+using ModelLab.Store;
 using ModelLab.Web.Settings;
 using ModelLab.Web.Startup;
+using ModelLab.Web.Verbs;
+
+if (VerbLine.IsVerb(args))
+{
+    return await VerbLine.RunAsync(args, Console.Out, Console.Error, CancellationToken.None);
+}
 
 try
 {
     await ServerHost.Build(args).RunAsync();
     return Environment.ExitCode;
 }
-catch (SettingsRefusedException e)
+catch (Exception e) when (e is SettingsRefusedException or StoreSettingsException)
 {
     await Console.Error.WriteLineAsync(e.Message);
     return 1;

@@ -25,18 +25,30 @@ public sealed record ReceivedSource(SourceView Source, DatasetView Dataset, Tabl
 public sealed class ReceiveSource(ProjectGate gate, IProjectStore store, ISourceVault vault, VariableStates states)
 {
     /// <summary>Takes it in.</summary>
+    /// <param name="caller">Who.</param>
+    /// <param name="projectId">The project.</param>
+    /// <param name="request">What comes with the file.</param>
+    /// <param name="content">The file, read once from beginning to end.</param>
+    /// <param name="cancellation">Stops the work; nothing is stored then.</param>
+    /// <param name="completed">Asked after the file was read to its end, where more comes behind it: what it says takes the place of <paramref name="request"/>.</param>
     /// <exception cref="IntakeRefusedException">The file is no text table that can be read; rows and columns are named.</exception>
     /// <exception cref="RefusedException">It seems to hold direct identifiers, or does not match the dataset that it corrects.</exception>
-    public async Task<ReceivedSource> ExecuteAsync(Caller caller, string projectId, SourceRequest request, Stream content, CancellationToken cancellation)
+    public async Task<ReceivedSource> ExecuteAsync(
+        Caller caller, string projectId, SourceRequest request, Stream content, CancellationToken cancellation,
+        Func<CancellationToken, Task<SourceRequest>>? completed = null)
     {
         var admission = await gate.EnterAsync(caller, projectId, Role.Analyst, cancellation);
-        var reason = request.PreviousDatasetId is null ? null : Reasons.Require(request.Reason);
-        var fileName = Reasons.Name(Path.GetFileName(request.FileName?.Replace('\\', '/')), "fileName");
-        var previous = request.PreviousDatasetId is null ? null : await PreviousAsync(projectId, request.PreviousDatasetId, cancellation);
+        var known = completed is null ? await CheckAsync(projectId, request, cancellation) : null;
         var sourceId = gate.NewId();
         try
         {
             var stored = await vault.StoreAsync(projectId, sourceId, content, cancellation);
+            if (completed is not null)
+            {
+                request = await completed(cancellation);
+            }
+
+            known ??= await CheckAsync(projectId, request, cancellation);
             var profile = await Task.Run(() => CsvTable.Profile(() => vault.Open(projectId, sourceId), request.Options, cancellation), cancellation);
             if (!request.IdentifiersChecked)
             {
@@ -44,17 +56,17 @@ public sealed class ReceiveSource(ProjectGate gate, IProjectStore store, ISource
             }
 
             var source = new SourceView(sourceId, stored.Sha256, stored.Bytes, profile.Rows, profile.Dialect, default, admission.Author, 0);
-            var variables = await StatesAsync(projectId, source, profile, previous, cancellation);
+            var variables = await StatesAsync(projectId, source, profile, known.Previous, cancellation);
             var datasetId = gate.NewId();
             await gate.RecordAsync(
                 admission,
                 [
                     new Act(
                         new SourceReceived(sourceId, stored.Sha256, stored.Bytes, profile.Rows, profile.Dialect, CsvTable.MethodVersion),
-                        reason, sourceId, new JsonObject { ["fileName"] = fileName }),
+                        known.Reason, sourceId, new JsonObject { ["fileName"] = known.FileName }),
                     new Act(
                         new DatasetRead(datasetId, sourceId, request.PreviousDatasetId, profile.Rows, variables),
-                        reason, sourceId, new JsonObject { ["columns"] = JsonSerializer.SerializeToNode(profile.Columns, ProjectJson.Options) }),
+                        known.Reason, sourceId, new JsonObject { ["columns"] = JsonSerializer.SerializeToNode(profile.Columns, ProjectJson.Options) }),
                 ],
                 null,
                 cancellation,
@@ -74,6 +86,11 @@ public sealed class ReceiveSource(ProjectGate gate, IProjectStore store, ISource
             throw;
         }
     }
+
+    private async Task<Known> CheckAsync(string projectId, SourceRequest request, CancellationToken cancellation) => new(
+        Reasons.Name(Path.GetFileName(request.FileName?.Replace('\\', '/')), "fileName"),
+        request.PreviousDatasetId is null ? null : Reasons.Require(request.Reason),
+        request.PreviousDatasetId is null ? null : await PreviousAsync(projectId, request.PreviousDatasetId, cancellation));
 
     private static void QuestionIdentifiers(TableProfile profile)
     {
@@ -136,6 +153,8 @@ public sealed class ReceiveSource(ProjectGate gate, IProjectStore store, ISource
             projectId, m => DataDictionary.At(m, m.Find<DatasetView>(datasetId) ?? throw RefusedException.NotFound("such dataset")), cancellation);
         return new Previous(dictionary, await SourceContents.OpenAsync(vault, projectId, dictionary.Dataset, cancellation));
     }
+
+    private sealed record Known(string FileName, string? Reason, Previous? Previous);
 
     private sealed record Previous(DataDictionary Dictionary, SourceContents Contents);
 }

@@ -1,5 +1,6 @@
 using System.Text.Json;
 using System.Text.Json.Serialization;
+using System.Text.Json.Serialization.Metadata;
 using ModelLab.Projects.Entries;
 
 namespace ModelLab.Web.Http;
@@ -24,8 +25,17 @@ public static class ApiJson
         options.UnmappedMemberHandling = JsonUnmappedMemberHandling.Disallow;
         options.AllowDuplicateProperties = false;
         options.RespectNullableAnnotations = true;
-        options.RespectRequiredConstructorParameters = true;
+        options.TypeInfoResolver = new DefaultJsonTypeInfoResolver { Modifiers = { RequireWhatMayNotBeNull } };
         options.MaxDepth = MaximumDepth;
+    }
+
+    /// <summary>A constructor parameter that may not be null and has no default has to be there. One that may be null may also be missing.</summary>
+    private static void RequireWhatMayNotBeNull(JsonTypeInfo type)
+    {
+        foreach (var property in type.Properties.Where(p => p.AssociatedParameter is { HasDefaultValue: false, IsNullable: false }))
+        {
+            property.IsRequired = true;
+        }
     }
 
     private static JsonSerializerOptions Make()

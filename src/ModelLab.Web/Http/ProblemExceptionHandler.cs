@@ -17,7 +17,9 @@ public sealed partial class ProblemExceptionHandler(ILogger<ProblemExceptionHand
         var problem = ProblemTranslation.OfRefusal(httpContext, exception);
         if (problem is null)
         {
-            LogFault(exception, httpContext.Request.Method, httpContext.Request.Path, Problems.TraceId(httpContext));
+            // The route and not the path, which may hold the secret of an invitation.
+            var route = (httpContext.GetEndpoint() as RouteEndpoint)?.RoutePattern.RawText ?? "(no endpoint)";
+            LogFault(exception, httpContext.Request.Method, route, Problems.TraceId(httpContext));
             problem = ProblemTranslation.OfFault(httpContext, exception);
         }
 
@@ -25,6 +27,6 @@ public sealed partial class ProblemExceptionHandler(ILogger<ProblemExceptionHand
         return true;
     }
 
-    [LoggerMessage(LogLevel.Error, "{Method} {Path} failed, trace {TraceId}")]
-    private partial void LogFault(Exception exception, string method, string path, string traceId);
+    [LoggerMessage(LogLevel.Error, "{Method} {Route} failed, trace {TraceId}")]
+    private partial void LogFault(Exception exception, string method, string route, string traceId);
 }

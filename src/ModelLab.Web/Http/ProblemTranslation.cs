@@ -5,6 +5,7 @@ using Microsoft.AspNetCore.Mvc;
 using ModelLab.Intake;
 using ModelLab.Projects;
 using ModelLab.Statistics.Designs;
+using ModelLab.Store.Writing;
 
 namespace ModelLab.Web.Http;
 
@@ -30,7 +31,12 @@ public static partial class ProblemTranslation
     /// <summary>The problem of a fault. Of what happened inside it says nothing; the log has it under the trace id.</summary>
     public static ProblemDetails OfFault(HttpContext context, Exception exception)
     {
-        if (IsDiskFull(exception))
+        if (exception is StorageFailedException { Full: false } storage)
+        {
+            return Problems.Of(context, StatusCodes.Status503ServiceUnavailable, "storage", $"{storage.Message} Nothing of this was stored; send the request again in a moment.");
+        }
+
+        if (exception is StorageFailedException || IsDiskFull(exception))
         {
             return Problems.Of(
                 context, StatusCodes.Status507InsufficientStorage, "diskFull",

@@ -1,4 +1,5 @@
 using System.ComponentModel.DataAnnotations;
+using ModelLab.Store;
 
 namespace ModelLab.Web.Settings;
 
@@ -56,4 +57,7 @@ public sealed class StorageSettings : ISettings
         KeysFolder = string.IsNullOrWhiteSpace(KeysFolder) ? Path.Combine(DataFolder, "keys") : Path.GetFullPath(KeysFolder, contentRoot);
         MasterKeyFile = string.IsNullOrWhiteSpace(MasterKeyFile) ? Path.Combine(KeysFolder, "master.key") : Path.GetFullPath(MasterKeyFile, contentRoot);
     }
+
+    /// <summary>The settings as the store takes them; call <see cref="Settle"/> first.</summary>
+    public StoreSettings ToStore() => new() { DataFolder = DataFolder, KeysFolder = KeysFolder, MasterKeyFile = MasterKeyFile, OrphanHours = OrphanHours };
 }

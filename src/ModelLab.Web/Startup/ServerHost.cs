@@ -1,5 +1,10 @@
 using Microsoft.Extensions.Configuration.Memory;
+using ModelLab.Projects;
+using ModelLab.Store.Sqlite;
+using ModelLab.Web.Features.ApiReference;
 using ModelLab.Web.Features.Health;
+using ModelLab.Web.Features.SignIn;
+using ModelLab.Web.Features.Tokens;
 using ModelLab.Web.Http;
 using ModelLab.Web.Settings;
 
@@ -18,11 +23,15 @@ public static class ServerHost
         var builder = CreateBuilder(args, out var settings);
         builder.AddServerServices(settings);
         var app = builder.Build();
-        app.UseServerPipeline();
-        app.MapServerEndpoints();
+        app.UseServerPipeline(settings);
+        app.MapServerEndpoints(settings);
         app.AnnounceWhenListening();
         return app;
     }
+
+    /// <summary>Builds the program for a verb: settings and store, no web server; logs go to standard error.</summary>
+    /// <exception cref="SettingsRefusedException">Settings are wrong.</exception>
+    public static WebApplication BuildForVerb(string[] args) => CreateBuilder(args, out _, logToStandardError: true).Build();
 
     /// <summary>A builder with the program's defaults below all other sources of settings, and the settings read and checked.</summary>
     /// <exception cref="SettingsRefusedException">Settings are wrong.</exception>
@@ -44,6 +53,8 @@ public static class ServerHost
 
         settings = ServerSettings.Read(builder.Configuration, builder.Environment);
         builder.Services.AddSettings(settings);
+        builder.Services.AddSingleton(TimeProvider.System);
+        builder.Services.AddModelLabSqliteStore(settings.Storage.ToStore());
         return builder;
     }
 
@@ -53,6 +64,9 @@ public static class ServerHost
         [WebHostDefaults.ServerUrlsKey] = DefaultAddress,
         ["Logging:LogLevel:Default"] = "Information",
         ["Logging:LogLevel:Microsoft"] = "Warning",
+
+        // That the keys of sessions lie unencrypted in the folder of the keys is known: the folder is the server's alone.
+        ["Logging:LogLevel:Microsoft.AspNetCore.DataProtection"] = "Error",
         ["Logging:LogLevel:Microsoft.Hosting.Lifetime"] = "Information",
     };
 
@@ -73,20 +87,40 @@ public static class ServerHost
             kestrel.AddServerHeader = false;
             kestrel.Limits.MaxRequestBodySize = settings.Storage.MaximumRequestBytes;
         });
-        builder.Services.AddSingleton(TimeProvider.System);
         builder.Services.AddSingleton<Readiness>();
         builder.Services.AddHostedService<StartupWork>();
+        builder.Services.AddHostedService<OrphanSweeping>();
         builder.Services.AddApiPlumbing();
+        builder.Services.AddSignIn(settings);
+        builder.Services.AddModelLabProjects();
+        builder.Services.AddApiDescription();
     }
 
-    private static void UseServerPipeline(this WebApplication app)
+    /// <summary>
+    /// The order matters: headers go on every answer; whatever fails inside becomes a problem; what comes from another site goes no
+    /// further; who calls is known before a request is looked up by its key.
+    /// </summary>
+    private static void UseServerPipeline(this WebApplication app, ServerSettings settings)
     {
+        app.UseForwardedAddresses(settings.Proxies);
         app.UseMiddleware<SecurityHeaders>();
         app.UseExceptionHandler();
         app.UseStatusCodePages(context => StatusProblems.WriteAsync(context.HttpContext));
         app.UseMiddleware<ReadinessGate>();
         app.UseMiddleware<CrossSiteRequests>();
+        app.UseRouting();
+        app.UseRateLimiter();
+        app.UseAuthentication();
+        app.UseAuthorization();
+        app.UseMiddleware<TokenScopeGate>();
+        app.UseMiddleware<IdempotencyGate>();
     }
 
-    private static void MapServerEndpoints(this WebApplication app) => app.MapHealth();
+    private static void MapServerEndpoints(this WebApplication app, ServerSettings settings)
+    {
+        app.MapHealth();
+        app.MapSignIn();
+        app.MapApiReference();
+        app.MapApi(settings);
+    }
 }

@@ -1,0 +1,159 @@
+using System.Text.Json.Nodes;
+using Microsoft.AspNetCore.Authorization;
+using Microsoft.AspNetCore.OpenApi;
+using Microsoft.OpenApi;
+using ModelLab.Ledger;
+using ModelLab.Statistics.Designs;
+using ModelLab.Web.Http;
+
+namespace ModelLab.Web.Features.ApiReference;
+
+/// <summary>The description of the API by itself: <c>/openapi/v1.json</c>.</summary>
+public static class OpenApiRegistration
+{
+    /// <summary>Name of the document.</summary>
+    public const string DocumentName = "v1";
+
+    private const string BearerScheme = "apiToken";
+
+    /// <summary>Registers the document.</summary>
+    public static void AddApiDescription(this IServiceCollection services) => services.AddOpenApi(DocumentName, options =>
+    {
+        options.AddDocumentTransformer(DescribeDocument);
+        options.AddOperationTransformer(DescribeOperation);
+        options.AddSchemaTransformer(DescribeSchema);
+    });
+
+    private static Task DescribeDocument(OpenApiDocument document, OpenApiDocumentTransformerContext context, CancellationToken cancellation)
+    {
+        document.Info = new OpenApiInfo
+        {
+            Title = "ModelLab",
+            Version = "1",
+            Description =
+                "Everything that a page can do, through the same use cases. Numbers are JSON numbers with the shortest digits that read back "
+                + "to the same double; a value that does not exist is null. Refusals are problem details (RFC 9457): `detail` says what is wrong "
+                + "and what to do, `errors` lists the places, `kind` is a stable word for programs. Members that are not known are refused. "
+                + "A POST may carry an `Idempotency-Key`: sent again with the same key, the same request acts once and is answered twice.",
+        };
+
+        // The address under which the server was asked is left out, so that the document is the same everywhere.
+        document.Servers = [new OpenApiServer { Url = "/" }];
+        document.Components ??= new OpenApiComponents();
+        document.Components.SecuritySchemes ??= new Dictionary<string, IOpenApiSecurityScheme>();
+        document.Components.SecuritySchemes[BearerScheme] = new OpenApiSecurityScheme
+        {
+            Type = SecuritySchemeType.Http,
+            Scheme = "bearer",
+            Description = "An API token of a person, of scope read or write: `Authorization: Bearer TOKEN`. A page uses the session cookie instead.",
+        };
+        return Task.CompletedTask;
+    }
+
+    private static Task DescribeOperation(OpenApiOperation operation, OpenApiOperationTransformerContext context, CancellationToken cancellation)
+    {
+        var metadata = context.Description.ActionDescriptor.EndpointMetadata;
+        var open = metadata.OfType<IAllowAnonymous>().Any();
+        operation.Responses ??= [];
+        if (!open)
+        {
+            operation.Security = [new OpenApiSecurityRequirement { [new OpenApiSecuritySchemeReference(BearerScheme, context.Document)] = [] }];
+            AddProblem(operation, "401", "No token or session, or one that does not hold.");
+        }
+
+        AddProblem(operation, "500", "A fault of the server; the log has it under the trace id.");
+        if (!open && HttpMethods.IsPost(context.Description.HttpMethod ?? string.Empty))
+        {
+            operation.Parameters ??= [];
+            operation.Parameters.Add(new OpenApiParameter
+            {
+                Name = IdempotencyGate.KeyHeader,
+                In = ParameterLocation.Header,
+                Description = "A key of your own, 1 to 200 visible ASCII characters. The same key with the same request gives the first answer again.",
+                Schema = new OpenApiSchema { Type = JsonSchemaType.String, MaxLength = 200 },
+            });
+        }
+
+        return Task.CompletedTask;
+    }
+
+    private static void AddProblem(OpenApiOperation operation, string status, string description)
+    {
+        if (!operation.Responses!.ContainsKey(status))
+        {
+            operation.Responses[status] = new OpenApiResponse
+            {
+                Description = description,
+                Content = new Dictionary<string, OpenApiMediaType> { [Problems.MediaType] = new() { Schema = ProblemSchema() } },
+            };
+        }
+    }
+
+    private static OpenApiSchema ProblemSchema() => new()
+    {
+        Type = JsonSchemaType.Object,
+        Description = "Problem details (RFC 9457).",
+        Properties = new Dictionary<string, IOpenApiSchema>
+        {
+            ["type"] = new OpenApiSchema { Type = JsonSchemaType.String },
+            ["title"] = new OpenApiSchema { Type = JsonSchemaType.String },
+            ["status"] = new OpenApiSchema { Type = JsonSchemaType.Integer },
+            ["detail"] = new OpenApiSchema { Type = JsonSchemaType.String, Description = "What is wrong and what to do, in plain words." },
+            ["instance"] = new OpenApiSchema { Type = JsonSchemaType.String },
+            ["kind"] = new OpenApiSchema { Type = JsonSchemaType.String, Description = "A stable word for programs." },
+            ["traceId"] = new OpenApiSchema { Type = JsonSchemaType.String },
+            ["errors"] = new OpenApiSchema
+            {
+                Type = JsonSchemaType.Array,
+                Items = new OpenApiSchema
+                {
+                    Type = JsonSchemaType.Object,
+                    Properties = new Dictionary<string, IOpenApiSchema>
+                    {
+                        ["row"] = new OpenApiSchema { Type = JsonSchemaType.Integer | JsonSchemaType.Null },
+                        ["column"] = new OpenApiSchema { Type = JsonSchemaType.String | JsonSchemaType.Null },
+                        ["message"] = new OpenApiSchema { Type = JsonSchemaType.String },
+                    },
+                },
+            },
+        },
+    };
+
+    /// <summary>Types with converters of their own are described by hand.</summary>
+    private static Task DescribeSchema(OpenApiSchema schema, OpenApiSchemaTransformerContext context, CancellationToken cancellation)
+    {
+        if (context.JsonTypeInfo.Type == typeof(Microsoft.AspNetCore.Mvc.ProblemDetails))
+        {
+            var problem = ProblemSchema();
+            schema.Description = problem.Description;
+            schema.Properties = problem.Properties;
+        }
+        else if (context.JsonTypeInfo.Type == typeof(Sha256Hash))
+        {
+            schema.Type = JsonSchemaType.String;
+            schema.Pattern = "^[0-9a-f]{64}$";
+            schema.Description = "SHA-256, 64 lower-case hexadecimal digits.";
+        }
+        else if (typeof(Term).IsAssignableFrom(context.JsonTypeInfo.Type))
+        {
+            schema.Type = JsonSchemaType.Object;
+            schema.Description = "A term: {\"variable\":\"x\"}, where a categorical variable is one term, or {\"power\":{\"variable\":\"x\",\"degree\":2}}.";
+            schema.Properties = new Dictionary<string, IOpenApiSchema>
+            {
+                ["variable"] = new OpenApiSchema { Type = JsonSchemaType.String },
+                ["power"] = new OpenApiSchema
+                {
+                    Type = JsonSchemaType.Object,
+                    Properties = new Dictionary<string, IOpenApiSchema>
+                    {
+                        ["variable"] = new OpenApiSchema { Type = JsonSchemaType.String },
+                        ["degree"] = new OpenApiSchema { Type = JsonSchemaType.Integer, Minimum = "2", Maximum = "20" },
+                    },
+                },
+            };
+            schema.Examples = [new JsonObject { ["variable"] = "x" }];
+        }
+
+        return Task.CompletedTask;
+    }
+}
