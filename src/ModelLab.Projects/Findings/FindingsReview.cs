@@ -35,6 +35,15 @@ public static class FindingsReview
         ];
     }
 
+    /// <summary>The findings that stand, or stood, at a revision of a path: raised there or before, their cause not gone by then.</summary>
+    public static IEnumerable<FindingView> AtRevision(IReadModel model, string pathId, int number)
+    {
+        var revisions = model.All<RevisionView>().Where(r => r.PathId == pathId).ToDictionary(r => r.Id, StringComparer.Ordinal);
+        return model.All<FindingView>().Where(f =>
+            revisions.TryGetValue(f.Finding.Place.Id, out var raised) && raised.Number <= number
+            && !(f.State == FindingState.Gone && revisions.Values.Where(r => r.EntryNumber < f.ChangedEntry).Max(r => r.Number) <= number));
+    }
+
     /// <summary>The findings that stand after acts were taken.</summary>
     public static IReadOnlyList<StandingFinding> After(IReadOnlyList<StandingFinding> standing, IEnumerable<Act> acts)
     {

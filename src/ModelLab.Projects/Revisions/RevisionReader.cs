@@ -1,6 +1,7 @@
 using ModelLab.Ledger.Entries;
 using ModelLab.Projects.Datasets;
 using ModelLab.Projects.Entries;
+using ModelLab.Projects.Findings;
 using ModelLab.Projects.Paths;
 using ModelLab.Projects.Preparations;
 using ModelLab.Projects.Storage;
@@ -60,8 +61,10 @@ public sealed class RevisionReader(IProjectStore store, ISourceVault vault)
         var dataset = model.Find<DatasetView>(path.Plan.DatasetId)!;
         var preparation = body.PreparationId is null ? null : model.Find<PreparationView>(body.PreparationId) ?? formed!.After.Preparation;
         var findings = formed is null
-            ? model.All<FindingView>().Where(f => f.Finding.Place.Id == body.RevisionId).Select(f => new FindingReading(f.Id, f.Finding, f.State))
-            : formed.Acts.Select(a => a.Body).OfType<FindingRaised>().Select(f => new FindingReading(null, f.Finding, FindingState.Open));
+            ? FindingsReview.AtRevision(model, body.PathId, body.Number).Select(f => new FindingReading(f.Id, f.Finding, f.State))
+            : formed.After.Findings.Select(f => model.Find<FindingView>(f.Id) is { } known
+                ? new FindingReading(known.Id, known.Finding, known.State)
+                : new FindingReading(null, f.Finding, FindingState.Open));
         return new State(
             path,
             DataDictionary.At(model, dataset, path.Plan.DictionaryEntry),

@@ -55,7 +55,7 @@ public sealed record FindingReading(string? Id, FindingRecord Finding, FindingSt
 /// <param name="Fit">Figures of the whole model.</param>
 /// <param name="Checks">Checks of the assumptions.</param>
 /// <param name="Collinearity">Sets of tied predictors.</param>
-/// <param name="Findings">Findings that stand at this revision's path or were raised here.</param>
+/// <param name="Findings">Findings that stand at this revision, with their present state.</param>
 /// <param name="PreparationId">The preparation, or null: all rows.</param>
 /// <param name="Rows">The rows analysed and what missing values cost.</param>
 /// <param name="Notices">What a reader must know before reading the figures.</param>

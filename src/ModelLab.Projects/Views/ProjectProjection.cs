@@ -56,7 +56,7 @@ public static class ProjectProjection
                 model.Put(Existing<CommentView>(model, e.CommentId) with { Settled = true, SettledAt = entry.At, SettledBy = entry.By, SettledReason = entry.Reason });
                 break;
             case FindingRaised e:
-                model.Put(new FindingView(e.FindingId, e.Finding, FindingState.Open, entry.At, entry.Number, null, null, null));
+                model.Put(new FindingView(e.FindingId, e.Finding, FindingState.Open, entry.At, entry.Number, null, null, null, null));
                 break;
             case FindingAccepted e:
                 PutFinding(model, e.FindingId, FindingState.Accepted, entry);
@@ -82,7 +82,7 @@ public static class ProjectProjection
     }
 
     private static void PutFinding(IReadModelWriter model, string id, FindingState state, LedgerEntry entry) =>
-        model.Put(Existing<FindingView>(model, id) with { State = state, ChangedAt = entry.At, ChangedBy = entry.By, ChangedReason = entry.Reason });
+        model.Put(Existing<FindingView>(model, id) with { State = state, ChangedEntry = entry.Number, ChangedAt = entry.At, ChangedBy = entry.By, ChangedReason = entry.Reason });
 
     private static T Existing<T>(IReadModelWriter model, string id)
         where T : class, IView =>

@@ -72,4 +72,4 @@ public enum FindingState
 
 /// <summary>Something that a careful reviewer would raise.</summary>
 public sealed record FindingView(
-    string Id, FindingRecord Finding, FindingState State, DateTimeOffset RaisedAt, long RaisedEntry, DateTimeOffset? ChangedAt, Author? ChangedBy, string? ChangedReason) : IView;
+    string Id, FindingRecord Finding, FindingState State, DateTimeOffset RaisedAt, long RaisedEntry, long? ChangedEntry, DateTimeOffset? ChangedAt, Author? ChangedBy, string? ChangedReason) : IView;
