@@ -60,7 +60,7 @@ internal sealed class SchemaMigration(StorePaths paths, TimeProvider time)
             return;
         }
 
-        PrivateFiles.WriteNew(Marker, Encoding.UTF8.GetBytes(exists && applied.Count > 0 ? Snapshot(pending) : NewDatabase));
+        PrivateFiles.WriteNew(Marker, Encoding.UTF8.GetBytes(exists && HoldsTables() ? Snapshot(pending) : NewDatabase));
         try
         {
             using (var connection = SqliteConnections.Open(paths.Database))
@@ -116,16 +116,24 @@ internal sealed class SchemaMigration(StorePaths paths, TimeProvider time)
 
     private List<string> Applied()
     {
-        using var connection = SqliteConnections.Open(paths.Database, SqliteOpenMode.ReadWrite);
-        var tables = connection.Texts("SELECT name FROM sqlite_master WHERE type = 'table'");
-        if (tables.Contains("__EFMigrationsHistory"))
+        using (var connection = SqliteConnections.Open(paths.Database, SqliteOpenMode.ReadWrite))
         {
-            return [.. connection.Texts("SELECT MigrationId FROM __EFMigrationsHistory ORDER BY MigrationId")];
+            if (connection.Value("SELECT 1 FROM sqlite_master WHERE name = '__EFMigrationsHistory'") is not null)
+            {
+                return [.. connection.Texts("SELECT MigrationId FROM __EFMigrationsHistory ORDER BY MigrationId")];
+            }
         }
 
-        return tables.Any(t => !t.StartsWith("sqlite_", StringComparison.Ordinal) && t != "__EFMigrationsLock")
+        return HoldsTables()
             ? throw new StoreUnusableException($"{paths.Database} is not a database of this program. Give another data folder (ModelLab:DataFolder).")
             : [];
+    }
+
+    private bool HoldsTables()
+    {
+        using var connection = SqliteConnections.Open(paths.Database, SqliteOpenMode.ReadWrite);
+        return connection.Texts("SELECT name FROM sqlite_master WHERE type = 'table'")
+            .Any(t => !t.StartsWith("sqlite_", StringComparison.Ordinal) && !t.StartsWith("__EFMigrations", StringComparison.Ordinal));
     }
 
     private static void RefuseNewer(List<string> applied, List<string> known)

@@ -1,6 +1,7 @@
 using System.Security.Cryptography;
 using Microsoft.EntityFrameworkCore;
 using ModelLab.Ledger;
+using ModelLab.Ledger.Entries;
 using ModelLab.Ledger.Verification;
 using ModelLab.Projects;
 using ModelLab.Store.Keys;
@@ -59,7 +60,7 @@ public sealed class ContentCheck(
             await foreach (var entry in stored.AsAsyncEnumerable().WithCancellation(cancellation))
             {
                 verifier.Add(entry.CanonicalBytes);
-                if (Ledger.Entries.LedgerEntry.Parse(entry.CanonicalBytes).Hash != entry.Hash)
+                if (HashOf(entry.CanonicalBytes) is { } hash && hash != entry.Hash)
                 {
                     problems.Add($"Ledger {head.LedgerId}, entry {entry.Number}: the hash beside the entry is not the entry's.");
                 }
@@ -74,6 +75,19 @@ public sealed class ContentCheck(
         }
 
         return (heads.Count, entries);
+    }
+
+    // Bytes that are no entry are the verifier's finding.
+    private static Sha256Hash? HashOf(byte[] canonicalBytes)
+    {
+        try
+        {
+            return LedgerEntry.Parse(canonicalBytes).Hash;
+        }
+        catch (FormatException)
+        {
+            return null;
+        }
     }
 
     private async Task<(int Sources, int Withdrawn)> SourcesAsync(HashSet<(string, string)> destroyed, List<string> problems, CancellationToken cancellation)

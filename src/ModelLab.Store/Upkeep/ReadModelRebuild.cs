@@ -28,7 +28,16 @@ public sealed class ReadModelRebuild(StoreWriter writer, IDbContextFactory<Model
     {
         await using var context = await contexts.CreateDbContextAsync(cancellation);
         await using var transaction = await provider.BeginReadAsync(context, cancellation);
-        var formed = Form(context, projectId);
+        Dictionary<(string Collection, string Id), DocumentRow> formed;
+        try
+        {
+            formed = Form(context, projectId);
+        }
+        catch (Exception e) when (e is FormatException or JsonException or InvalidOperationException)
+        {
+            return [$"Project {projectId}: its ledger gives no read model: {e.Message}"];
+        }
+
         var differences = new List<string>();
         await foreach (var stored in context.Documents.AsNoTracking().Where(d => d.LedgerId == projectId).AsAsyncEnumerable().WithCancellation(cancellation))
         {
