@@ -9,7 +9,6 @@ internal static class TailQuantile
     private const double LongestStep = 40;
     private const double Settled = 1e-11;
     private const int MostSteps = 500;
-    private const double SmallestNormal = 2.2250738585072014e-308;
 
     /// <summary>The x &gt; 0 that leaves <paramref name="upperTail"/> above it.</summary>
     /// <param name="split">Cuts the distribution at a positive x.</param>
@@ -40,21 +39,26 @@ internal static class TailQuantile
             // ln-step towards the root; the slope is negative for the upper side and positive for the lower
             var step = Math.Abs(excess) / (tail.Elasticity(upper) * power);
             step = (tooLow ? 1 : -1) * (double.IsNaN(step) ? LongestStep : Math.Min(step, LongestStep));
-            var next = x * Math.Exp(step);
             if (Math.Abs(step) < Settled)
             {
                 // Newton squares the error: after this step it lies far below a unit of the last place.
                 return x + (x * step);
             }
 
-            if (next <= low || next >= high)
+            if (tooLow ? x == double.MaxValue : x == double.Epsilon)
             {
-                next = Between(low, high, x, tooLow);
+                return tooLow ? double.PositiveInfinity : 0;
             }
 
-            if (next == x || next == 0 || double.IsInfinity(next))
+            var next = Math.Clamp(x * Math.Exp(step), double.Epsilon, double.MaxValue);
+            if (next <= low || next >= high)
             {
-                return next;
+                next = Math.Clamp(Between(low, high), double.Epsilon, double.MaxValue);
+            }
+
+            if (next == x)
+            {
+                return x;
             }
 
             x = next;
@@ -63,11 +67,14 @@ internal static class TailQuantile
         return x;
     }
 
-    private static double Between(double low, double high, double x, bool rising) => (low, high) switch
+    // an end not reached yet is approached by factors, the gap between two ends halved
+    private static double Between(double low, double high)
     {
-        (0, double.PositiveInfinity) => rising ? x * 2 : x / 2,
-        (0, _) => high < SmallestNormal ? 0 : high / 1024,
-        (_, double.PositiveInfinity) => low * 1024,
-        _ => low + ((high - low) / 2),
-    };
+        if (low == 0)
+        {
+            return high / 1024;
+        }
+
+        return double.IsInfinity(high) ? low * 1024 : low + ((high - low) / 2);
+    }
 }

@@ -89,6 +89,14 @@ public class UpperQuantileTests(ITestOutputHelper output)
         Assert.Equal(double.PositiveInfinity, StudentT.UpperQuantile(1e-10, 0.01));
     }
 
+    [Fact]
+    public void A_quantile_among_the_smallest_doubles_is_met_and_one_below_them_is_0()
+    {
+        // χ² on few degrees of freedom heaps up at 0 like x^(df/2)
+        Assert.InRange(ChiSquared.UpperQuantile(0.9999999999552448, 0.06421954057511428), double.Epsilon, 1e-320);
+        Assert.Equal(0, ChiSquared.UpperQuantile(0.99, 0.001));
+    }
+
     [Theory]
     [InlineData(0)]
     [InlineData(1)]
