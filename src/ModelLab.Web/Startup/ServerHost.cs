@@ -2,6 +2,7 @@ using Microsoft.Extensions.Configuration.Memory;
 using ModelLab.Projects;
 using ModelLab.Store.Sqlite;
 using ModelLab.Web.Features.ApiReference;
+using ModelLab.Web.Features.Demo;
 using ModelLab.Web.Features.Health;
 using ModelLab.Web.Features.SignIn;
 using ModelLab.Web.Features.Tokens;
@@ -93,6 +94,11 @@ public static class ServerHost
         builder.Services.AddApiPlumbing();
         builder.Services.AddSignIn(settings);
         builder.Services.AddModelLabProjects();
+        if (builder.Environment.IsDevelopment())
+        {
+            builder.Services.AddDemo();
+        }
+
         builder.Services.AddApiDescription();
     }
 
