@@ -77,6 +77,16 @@ public class StatisticsCatalogueTests
     }
 
     [Fact]
+    public void Every_figure_is_read_by_some_test()
+    {
+        var read = PropertiesReadByTests();
+        var unread = Figures()
+            .Select(figure => $"{figure.Property.DeclaringType!.Name}.{figure.Property.Name}")
+            .Where(name => !read.Contains(name));
+        Assert.True(!unread.Any(), $"read by no test: {string.Join(", ", unread)}");
+    }
+
+    [Fact]
     public void A_property_that_no_test_reads_would_be_seen()
     {
         // read above, so it is found; the contract of a record that is never read is not
