@@ -153,9 +153,10 @@ internal sealed class DesignForming(DataTable table, ModelSpecification specific
     private NumberForm FormNumber(NumberColumn column, int degree, string text)
     {
         var largest = 0.0;
+        var values = column.Values;
         foreach (var row in rows)
         {
-            largest = Math.Max(largest, Math.Abs(column.Values[row]));
+            largest = Math.Max(largest, Math.Abs(values[row]));
         }
 
         var exponent = largest == 0.0 ? 0 : Math.ILogB(largest);
@@ -172,25 +173,35 @@ internal sealed class DesignForming(DataTable table, ModelSpecification specific
 
     private void CheckPresent(Column column)
     {
+        if (column is NumberColumn number)
+        {
+            var values = number.Values;
+            foreach (var row in rows)
+            {
+                if (!double.IsFinite(values[row]))
+                {
+                    throw Unusable(column, row, double.IsNaN(values[row]));
+                }
+            }
+
+            return;
+        }
+
         foreach (var row in rows)
         {
             if (column.IsMissing(row))
             {
-                throw new ModelRefusedException(
-                    ModelRefusal.ValueMissing,
-                    $"'{column.Name}' is missing in row {row + 1}. Leave that row out of the rows analysed, or fill the value in.",
-                    [column.Name]);
-            }
-
-            if (column is NumberColumn number && !double.IsFinite(number.Values[row]))
-            {
-                throw new ModelRefusedException(
-                    ModelRefusal.ValueMissing,
-                    $"'{column.Name}' is infinite in row {row + 1}. Correct the value, or leave that row out of the rows analysed.",
-                    [column.Name]);
+                throw Unusable(column, row, true);
             }
         }
     }
+
+    private static ModelRefusedException Unusable(Column column, int row, bool missing) => new(
+        ModelRefusal.ValueMissing,
+        missing
+            ? $"'{column.Name}' is missing in row {row + 1}. Leave that row out of the rows analysed, or fill the value in."
+            : $"'{column.Name}' is infinite in row {row + 1}. Correct the value, or leave that row out of the rows analysed.",
+        [column.Name]);
 
     private void CheckVaries(NumberColumn column)
     {

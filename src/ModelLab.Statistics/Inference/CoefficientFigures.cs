@@ -1,3 +1,4 @@
+using ModelLab.Statistics.Designs;
 using ModelLab.Statistics.Distributions;
 using ModelLab.Statistics.LeastSquares;
 using ModelLab.Statistics.Numerics;
@@ -14,16 +15,17 @@ internal static class CoefficientFigures
     public static IReadOnlyList<CoefficientResult> Of(LeastSquaresFit fit, double confidence)
     {
         var quantile = fit.IsExact ? double.NaN : StudentT.UpperQuantile((1.0 - confidence) / 2.0, fit.ResidualDegrees);
+        var standardised = StandardisedCoefficient.Of(fit);
         var results = new CoefficientResult[fit.Columns];
         for (var column = 0; column < results.Length; column++)
         {
-            results[column] = Of(fit, column, quantile);
+            results[column] = Of(fit, column, quantile, standardised[column]);
         }
 
         return results;
     }
 
-    private static CoefficientResult Of(LeastSquaresFit fit, int column, double quantile)
+    private static CoefficientResult Of(LeastSquaresFit fit, int column, double quantile, DoubleDouble? standardised)
     {
         var design = fit.Design;
         var named = design.Columns[column];
@@ -32,7 +34,7 @@ internal static class CoefficientFigures
         var isSlope = named.Term is not null;
         var result = new CoefficientResult(
             named.Term, named.CategoryIndex, named.Category, estimate.Hi, null, null, null, null, null,
-            StandardisedCoefficient.Of(fit, column)?.Hi, null, null, isSlope ? VarianceInflationFactor.Of(fit, column)?.Hi : null);
+            standardised?.Hi, null, null, isSlope ? VarianceInflationFactor.Of(fit, column)?.Hi : null);
         if (fit.IsExact)
         {
             return result;
@@ -40,7 +42,7 @@ internal static class CoefficientFigures
 
         var error = DoubleDouble.ScaleB(DoubleDouble.Sqrt(fit.CrossProductInverse(column, column) * fit.MeanSquare), exponent);
         var t = estimate / error;
-        var isSingle = isSlope && design.Columns.Count(other => Equals(other.Term, named.Term)) == 1;
+        var isSingle = isSlope && !SharesTerm(design, column, column - 1) && !SharesTerm(design, column, column + 1);
         var unexplained = fit.ResidualSumOfSquares / fit.TotalSumOfSquares;
         return result with
         {
@@ -53,4 +55,8 @@ internal static class CoefficientFigures
             SemiPartialR = isSingle ? PartialCorrelation.SemiPartial(t, unexplained, fit.ResidualDegrees).Hi : null,
         };
     }
+
+    // The columns of a term stand side by side.
+    private static bool SharesTerm(Design design, int column, int other) =>
+        other >= 0 && other < design.Columns.Count && ReferenceEquals(design.Columns[column].Term, design.Columns[other].Term);
 }

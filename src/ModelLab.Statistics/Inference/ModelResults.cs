@@ -12,7 +12,7 @@ namespace ModelLab.Statistics.Inference;
 /// <param name="P">Two-sided p of t on n − p degrees of freedom.</param>
 /// <param name="StandardError">s·√(X'X)⁻¹ⱼⱼ.</param>
 /// <param name="T">b / standard error.</param>
-/// <param name="Standardized">b·SD(x)/SD(y), sample SDs; null for the intercept, 0/1 columns of a category, powers (until they are formed from standardised variables) and models without intercept.</param>
+/// <param name="Standardized">b·SD(x)/SD(y), sample SDs; for a variable with powers the coefficients of the same polynomial in the standardised variable. Null for the intercept, 0/1 columns of a category, powers without all lower ones, and models without intercept.</param>
 /// <param name="PartialR">t/√(t² + df), sign of t; single-column terms.</param>
 /// <param name="SemiPartialR">t·√((1 − R²)/df); single-column terms.</param>
 /// <param name="Vif">1/(1 − R²ⱼ) of the column on all others; null for the intercept and without intercept.</param>
@@ -28,8 +28,8 @@ public sealed record CoefficientResult(
 /// <param name="F">Partial F on (Df, n − p).</param>
 /// <param name="P">Upper tail of F.</param>
 /// <param name="PartialRSquared">SS/(SS + RSS).</param>
-/// <param name="Vif">VIF, generalised where the term has several columns (Fox and Monette 1992).</param>
-/// <param name="Removable">Neither held in nor needed by a higher-order term of the model (marginality).</param>
+/// <param name="Vif">VIF, generalised where the term has several columns (Fox and Monette 1992); null without intercept.</param>
+/// <param name="Removable">Neither held in nor needed by a higher-order term of the model (marginality), nor all that a model without intercept has.</param>
 public sealed record TermResult(Term Term, int Df, double SumOfSquares, double? F, double? P, double? PartialRSquared, double? Vif, bool Removable);
 
 /// <summary>What the model would be without one removable term, on the same rows.</summary>

@@ -14,33 +14,33 @@ namespace ModelLab.Statistics.Inference;
 /// </remarks>
 internal static class StandardisedCoefficient
 {
-    /// <summary>The standardised coefficient of a column, or null where there is none.</summary>
-    public static DoubleDouble? Of(LeastSquaresFit fit, int column)
+    /// <summary>The standardised coefficient of every column; null where there is none.</summary>
+    public static DoubleDouble?[] Of(LeastSquaresFit fit)
     {
         var design = fit.Design;
-        var asked = design.Columns[column];
-        if (!design.Specification.Intercept || asked.Term is null || asked.Category is not null)
+        var results = new DoubleDouble?[fit.Columns];
+        if (!design.Specification.Intercept)
         {
-            return null;
+            return results;
         }
 
-        var powers = PowersOf(design, asked.Term.Variables[0]);
-        if (powers.Length == 1 && Degree(asked.Term) == 1)
+        var numeric = Enumerable.Range(0, fit.Columns).Where(column => design.Columns[column] is { Term: not null, Category: null });
+        foreach (var variable in numeric.GroupBy(column => design.Columns[column].Term!.Variables[0], StringComparer.Ordinal))
         {
-            return fit.Coefficient(column) * DoubleDouble.Sqrt(fit.CentredProduct(column, column) / fit.TotalSumOfSquares);
-        }
-
-        for (var degree = 1; degree <= powers.Length; degree++)
-        {
-            if (Degree(design.Columns[powers[degree - 1]].Term!) != degree)
+            var powers = variable.OrderBy(column => Degree(design.Columns[column].Term!)).ToArray();
+            if (Degree(design.Columns[powers[^1]].Term!) == powers.Length)
             {
-                return null;
+                for (var degree = 1; degree <= powers.Length; degree++)
+                {
+                    results[powers[degree - 1]] = FromPowers(fit, powers, degree);
+                }
             }
         }
 
-        return FromPowers(fit, powers, Degree(asked.Term));
+        return results;
     }
 
+    // The columns of x, x² … of one variable, all of them up to the highest.
     private static DoubleDouble FromPowers(LeastSquaresFit fit, int[] powers, int degree)
     {
         // All in the scaled units of the design: column k of the variable is its scaled value to the power k.
@@ -57,14 +57,6 @@ internal static class StandardisedCoefficient
         var deviation = DoubleDouble.Sqrt(fit.CentredProduct(linear, linear) / (fit.Rows - 1.0));
         return sum * DoubleDouble.Pow(deviation, degree) / DoubleDouble.Sqrt(fit.TotalSumOfSquares / (fit.Rows - 1.0));
     }
-
-    // Columns of a variable and its powers by rising degree.
-    private static int[] PowersOf(Design design, string variable) =>
-    [
-        .. Enumerable.Range(0, design.Columns.Count)
-            .Where(c => design.Columns[c].Term is { } term && string.Equals(term.Variables[0], variable, StringComparison.Ordinal))
-            .OrderBy(c => Degree(design.Columns[c].Term!)),
-    ];
 
     private static int Degree(Term term) => term is PowerTerm power ? power.Degree : 1;
 }

@@ -21,7 +21,12 @@ internal static class TermTests
         var first = specification.Intercept ? 1 : 0;
         foreach (var term in specification.Terms)
         {
-            var count = fit.Design.Columns.Skip(first).TakeWhile(column => term.Equals(column.Term)).Count();
+            var count = 1;
+            while (first + count < fit.Columns && ReferenceEquals(fit.Design.Columns[first + count].Term, term))
+            {
+                count++;
+            }
+
             var removable = Marginality.IsRemovable(term, specification, heldIn);
             results.Add(Of(fit, term, first, count, coefficients[first].P, removable));
             first += count;
