@@ -99,8 +99,14 @@ internal static class RankDeficiency
         throw new ModelRefusedException(
             ModelRefusal.RankDeficient,
             $"Some columns of the model are combinations of others on the analysed rows: {string.Join("; ", sentences)}. Take one of each set out.",
-            [.. aliases.SelectMany(alias => alias.DeterminedBy.Prepend(alias.Column)).Distinct(StringComparer.Ordinal).Where(name => name != "intercept")],
+            VariablesOf(design, aliases),
             aliases);
+    }
+
+    private static string[] VariablesOf(Design design, List<Alias> aliases)
+    {
+        var texts = aliases.SelectMany(alias => alias.DeterminedBy.Prepend(alias.Column)).ToHashSet(StringComparer.Ordinal);
+        return [.. design.Columns.Where(column => texts.Contains(column.Text)).SelectMany(column => column.Term?.Variables ?? []).Distinct(StringComparer.Ordinal)];
     }
 
     // Takes the parts along the basis out of a vector, twice (Gram and Schmidt, repeated); returns the length of what is left.

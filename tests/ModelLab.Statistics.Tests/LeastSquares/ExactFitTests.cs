@@ -1,3 +1,4 @@
+using System.Globalization;
 using ModelLab.Statistics.Designs;
 using ModelLab.Statistics.Selection;
 
@@ -25,6 +26,27 @@ public sealed class ExactFitTests
     [InlineData("Wampler3")]
     [InlineData("Filip")]
     public void A_close_fit_is_not_an_exact_one(string set) => Assert.False(ReferenceFit.OfLinear(set).Results.Fit.ExactFit);
+
+    [Theory]
+    [InlineData(40, 30)]
+    [InlineData(3000, 5)]
+    public void A_sum_of_decimals_is_fitted_exactly_by_its_parts(int rows, int numbers)
+    {
+        var table = SampleTable.Create(rows, numbers, 121);
+        var terms = Enumerable.Range(1, numbers).Select(i => $"x{i}").ToArray();
+        string Written(decimal value) => value.ToString(CultureInfo.InvariantCulture);
+        decimal At(string name, int row) => (decimal)((NumberColumn)table.Find(name)!).Values[row];
+        var outcome = Enumerable.Range(0, rows).Select(row => 0.7m + terms.Select((name, i) => At(name, row) * ((i % 7) - 2.9m)).Sum());
+        var decimals = new DataTable(
+        [
+            FixtureTable.Numbers("y", [.. outcome.Select(Written)]),
+            .. terms.Select(name => FixtureTable.Numbers(name, [.. Enumerable.Range(0, rows).Select(row => Written(At(name, row)))])),
+        ]);
+        var results = SampleTable.Fit(decimals, terms).Results;
+        Assert.True(results.Fit.ExactFit);
+        Assert.Equal(0.7, results.Coefficients[0].Estimate);
+        Assert.All(results.Coefficients.Skip(1).Select((c, i) => (c.Estimate, Expected: (i % 7) - 2.9)), pair => Assert.Equal(pair.Expected, pair.Estimate, 1e-15));
+    }
 
     [Fact]
     public void An_error_in_the_twentieth_digit_is_seen_where_it_is_written()

@@ -75,6 +75,14 @@ public sealed class RankDeficiencyTests
         Assert.True(indirect.Results.Coefficients[1].Vif > 1e15);
     }
 
+    [Fact]
+    public void The_variables_concerned_are_named_without_their_categories_and_powers()
+    {
+        var doubled = With(("isB", row => Code(row) == 1 ? 1.0 : 0.0), ("two", row => row % 2));
+        var exception = Assert.Throws<ModelRefusedException>(() => SampleTable.Fit(doubled, "x1", "g", "isB", "two", "two^2"));
+        Assert.Equal(["g", "isB", "two"], exception.Variables);
+    }
+
     private double Value(string name, int row) => ((NumberColumn)table.Find(name)!).Values[row];
 
     private int Code(int row) => ((CategoryColumn)table.Find("g")!).Codes[row];
