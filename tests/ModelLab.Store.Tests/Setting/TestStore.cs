@@ -2,6 +2,7 @@ using Microsoft.Data.Sqlite;
 using Microsoft.EntityFrameworkCore.Diagnostics;
 using Microsoft.Extensions.DependencyInjection;
 using Microsoft.Extensions.Time.Testing;
+using ModelLab.Projects;
 using ModelLab.Projects.Storage;
 using ModelLab.Store.Keys;
 using ModelLab.Store.Sqlite;
@@ -24,6 +25,7 @@ internal sealed class TestStore : IAsyncDisposable
         var collection = new ServiceCollection();
         collection.AddSingleton<TimeProvider>(time);
         collection.AddModelLabSqliteStore(new StoreSettings { DataFolder = folder });
+        collection.AddModelLabProjects();
         Paths = new StoreSettings { DataFolder = folder }.Resolve();
         if (interceptor is not null)
         {

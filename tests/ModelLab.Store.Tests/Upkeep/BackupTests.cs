@@ -23,7 +23,7 @@ public sealed class BackupTests
                 }
             },
             TestStore.Cancellation);
-        while (Interlocked.Read(ref acknowledged) < 15)
+        while (Interlocked.Read(ref acknowledged) < 15 && !writing.IsCompleted)
         {
             await Task.Yield();
         }
