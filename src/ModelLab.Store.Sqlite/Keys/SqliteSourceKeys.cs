@@ -73,6 +73,10 @@ public sealed class SqliteSourceKeys(StorePaths paths, TimeProvider time) : ISou
         {
             throw new InvalidOperationException($"Source {sourceId} of project {projectId} has or had a key already.", e);
         }
+        catch (SqliteException e) when (SqliteFailures.Explain(e) is { } plain)
+        {
+            throw plain;
+        }
 
         return new SourceKey(key);
     }

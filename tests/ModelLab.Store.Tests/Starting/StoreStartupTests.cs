@@ -1,3 +1,5 @@
+using Microsoft.Data.Sqlite;
+using Microsoft.Extensions.DependencyInjection;
 using ModelLab.Store.Keys;
 using ModelLab.Store.Sqlite;
 using ModelLab.Store.Sqlite.Starting;
@@ -25,6 +27,28 @@ public sealed class StoreStartupTests
         Assert.Equal(master, await File.ReadAllTextAsync(store.Paths.MasterKeyFile, TestStore.Cancellation));
         Assert.Equal(signing, await File.ReadAllTextAsync(store.Paths.ReceiptSigningKeyFile, TestStore.Cancellation));
         Assert.False(Directory.Exists(store.Paths.SnapshotFolder));
+    }
+
+    [Fact]
+    public async Task Keys_may_lie_on_another_disk()
+    {
+        var root = TestStore.NewFolder();
+        var settings = new StoreSettings
+        {
+            DataFolder = Path.Combine(root, "data"), KeysFolder = Path.Combine(root, "keys"), MasterKeyFile = Path.Combine(root, "master", "secret"),
+        };
+        await using (var services = new ServiceCollection().AddModelLabSqliteStore(settings).BuildServiceProvider())
+        {
+            await services.GetRequiredService<StoreStartup>().StartAsync(TestStore.Cancellation);
+            services.GetRequiredService<ISourceKeys>().Create("p", "s");
+            Assert.NotNull(services.GetRequiredService<ISourceKeys>().Find("p", "s"));
+        }
+
+        Assert.True(File.Exists(Path.Combine(root, "master", "secret")));
+        Assert.True(File.Exists(Path.Combine(root, "keys", "keys.db")));
+        Assert.False(Directory.Exists(Path.Combine(root, "data", "keys")));
+        SqliteConnection.ClearAllPools();
+        Directory.Delete(root, recursive: true);
     }
 
     [Fact]
