@@ -37,20 +37,25 @@ for place in / "$published" /var /etc /tmp; do
   fi
 done
 
-as_server() {
-  setpriv --reuid "$user" --regid "$user" --clear-groups --no-new-privs --inh-caps=-all --bounding-set=-all \
+as_server() { # replaces the calling shell, so that a signal reaches the program itself
+  exec setpriv --reuid "$user" --regid "$user" --clear-groups --no-new-privs --inh-caps=-all --bounding-set=-all \
     env -i PATH="$PATH" HOME="$data" TMPDIR="$data" DOTNET_EnableDiagnostics=0 ASPNETCORE_ENVIRONMENT="$environment" \
     ASPNETCORE_URLS="http://127.0.0.1:$port" ModelLab__DataFolder="$data" dotnet "$published/ModelLab.Web.dll" "$@"
 }
 
 cd "$published"
+if (as_server health) >/dev/null 2>&1; then
+  echo "something listens on port $port already; choose another with PORT" >&2
+  exit 2
+fi
 as_server </dev/null &
 server=$!
+trap 'kill -KILL "$server" 2>/dev/null || true' EXIT
 healthy=1
 for _ in $(seq 60); do
-  if as_server health; then healthy=0; break; fi
-  kill -0 "$server" 2>/dev/null || break
   sleep 1
+  kill -0 "$server" 2>/dev/null || break
+  if (as_server health); then healthy=0; break; fi
 done
 echo "files in the data folder:"
 find "$data" -type f -printf '  %P (%s bytes, mode %m)\n' | sort
@@ -58,6 +63,6 @@ code=0
 kill -TERM "$server" 2>/dev/null || true
 wait "$server" || code=$?
 if ((healthy != 0)); then echo "FAILED: the server did not become healthy" >&2; exit 1; fi
-if ((code != 0 && code != 143)); then echo "FAILED: the server ended with code $code" >&2; exit 1; fi
+if ((code != 0)); then echo "FAILED: the server ended with code $code" >&2; exit 1; fi
 echo "passed: started, healthy and stopped as user $user on a read-only file system ($environment)"
 INSIDE
