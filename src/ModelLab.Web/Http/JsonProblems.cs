@@ -41,7 +41,7 @@ public static partial class JsonProblems
 
         if (Unconverted().Match(text) is { Success: true } unconverted)
         {
-            return $"The value at {path} does not fit: expected is {Expected(unconverted.Groups["type"].Value)}.";
+            return $"The value at {path} does not fit: expected is {Expected(unconverted.Groups["type"].Value, path)}.";
         }
 
         var place = exception.LineNumber is { } line ? $" (line {line + 1}, byte {exception.BytePositionInLine + 1})" : string.Empty;
@@ -67,27 +67,36 @@ public static partial class JsonProblems
             : string.Empty;
     }
 
-    private static string Expected(string typeName)
+    /// <summary>What belongs at a place. The reader names the type of the value there, or only that of the object around it.</summary>
+    private static string Expected(string typeName, string path)
     {
-        var inner = Nullable().Match(typeName) is { Success: true } nullable ? nullable.Groups["type"].Value : typeName;
-        if (Find(inner) is { IsEnum: true } choice)
+        if (typeName.StartsWith("System.Collections", StringComparison.Ordinal) || typeName.EndsWith("[]", StringComparison.Ordinal))
         {
-            return "one of " + string.Join(", ", Enum.GetNames(choice).Select(JsonNamingPolicy.CamelCase.ConvertName));
+            return "a list";
         }
 
-        return inner switch
+        var type = Find(Nullable().Match(typeName) is { Success: true } nullable ? nullable.Groups["type"].Value : typeName);
+        if (type is not null && LastName().Match(path) is { Success: true } last && ApiJson.Options.GetTypeInfo(type) is { Kind: JsonTypeInfoKind.Object } around)
         {
-            "System.String" => "a text",
-            "System.Boolean" => "true or false",
-            "System.Double" => "a number",
-            "System.Int32" or "System.Int64" => "a whole number",
-            _ when inner.StartsWith("System.Collections", StringComparison.Ordinal) || inner.EndsWith("[]", StringComparison.Ordinal) => "a list",
-            _ => "an object",
-        };
+            type = around.Properties.FirstOrDefault(p => p.Name == last.Groups["name"].Value)?.PropertyType ?? type;
+        }
+
+        return type is null ? "an object" : Expected(System.Nullable.GetUnderlyingType(type) ?? type);
     }
 
+    private static string Expected(Type type) => type switch
+    {
+        { IsEnum: true } => "one of " + string.Join(", ", Enum.GetNames(type).Select(JsonNamingPolicy.CamelCase.ConvertName)),
+        _ when type == typeof(string) => "a text",
+        _ when type == typeof(bool) => "true or false",
+        _ when type == typeof(double) => "a number",
+        _ when type == typeof(int) || type == typeof(long) => "a whole number",
+        _ when typeof(System.Collections.IEnumerable).IsAssignableFrom(type) => "a list",
+        _ => "an object",
+    };
+
     private static Type? Find(string typeName) =>
-        typeof(JsonProblems).Assembly.GetType(typeName) ?? typeof(ProjectJson).Assembly.GetType(typeName)
+        Type.GetType(typeName) ?? typeof(JsonProblems).Assembly.GetType(typeName) ?? typeof(ProjectJson).Assembly.GetType(typeName)
         ?? typeof(Statistics.Designs.Term).Assembly.GetType(typeName) ?? typeof(Intake.VariableKind).Assembly.GetType(typeName);
 
     [GeneratedRegex(@"\s*Path: \$.*$", RegexOptions.Singleline)]
@@ -107,6 +116,9 @@ public static partial class JsonProblems
 
     [GeneratedRegex(@"^The JSON value could not be converted to (?<type>.*)\.$")]
     private static partial Regex Unconverted();
+
+    [GeneratedRegex(@"\.(?<name>\w+)$")]
+    private static partial Regex LastName();
 
     [GeneratedRegex(@"^System\.Nullable`1\[(?<type>.*)\]$")]
     private static partial Regex Nullable();

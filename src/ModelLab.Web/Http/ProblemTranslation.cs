@@ -98,10 +98,9 @@ public static partial class ProblemTranslation
 
         if (Required().Match(bad.Message) is { Success: true } required)
         {
-            var name = required.Groups["name"].Value;
-            var message = required.Groups["source"].Value.Contains("body", StringComparison.Ordinal)
-                ? "A body in JSON is needed here."
-                : $"The parameter '{name}' is needed here.";
+            var isBody = required.Groups["source"].Value.Contains("body", StringComparison.Ordinal);
+            var name = isBody ? "$" : required.Groups["name"].Value;
+            var message = isBody ? "A body in JSON is needed here." : $"The parameter '{name}' is needed here.";
             return Problems.Of(context, StatusCodes.Status400BadRequest, "malformed", message, [new RefusalDetail(null, name, message)]);
         }
 

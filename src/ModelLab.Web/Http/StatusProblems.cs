@@ -17,6 +17,12 @@ public static class StatusProblems
             StatusCodes.Status415UnsupportedMediaType => ("mediaType", "The body has a Content-Type that is not read here: application/json, for an upload multipart/form-data."),
             _ => ("refused", "The request was not carried out."),
         };
+        if (status == StatusCodes.Status401Unauthorized && context.Response.Headers.WWWAuthenticate.Count == 0)
+        {
+            // RFC 9110, section 11.6.1: a 401 says how to authenticate.
+            context.Response.Headers.WWWAuthenticate = "Bearer";
+        }
+
         return Problems.WriteAsync(context, status, kind, detail);
     }
 }

@@ -18,6 +18,7 @@ public sealed partial class StartupWork(
     {
         try
         {
+            await ListeningAsync(stoppingToken);
             readiness.Now("opening the store");
             await services.GetRequiredService<StoreStartup>().StartAsync(stoppingToken);
             await FirstStartAsync(stoppingToken);
@@ -40,6 +41,14 @@ public sealed partial class StartupWork(
             LogFailure(e, readiness.Stage);
             Stop(e);
         }
+    }
+
+    /// <summary>A stop while the web server still starts would end in a fault of its own instead of the message that tells why.</summary>
+    private async Task ListeningAsync(CancellationToken cancellation)
+    {
+        var started = new TaskCompletionSource(TaskCreationOptions.RunContinuationsAsynchronously);
+        await using var registration = lifetime.ApplicationStarted.Register(started.SetResult);
+        await started.Task.WaitAsync(cancellation);
     }
 
     private async Task FirstStartAsync(CancellationToken cancellation)
