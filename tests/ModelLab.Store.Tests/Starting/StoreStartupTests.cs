@@ -35,7 +35,9 @@ public sealed class StoreStartupTests
         var root = TestStore.NewFolder();
         var settings = new StoreSettings
         {
-            DataFolder = Path.Combine(root, "data"), KeysFolder = Path.Combine(root, "keys"), MasterKeyFile = Path.Combine(root, "master", "secret"),
+            DataFolder = Path.Combine(root, "data"),
+            KeysFolder = Path.Combine(root, "keys"),
+            MasterKeyFile = Path.Combine(root, "master", "secret"),
         };
         await using (var services = new ServiceCollection().AddModelLabSqliteStore(settings).BuildServiceProvider())
         {
