@@ -14,7 +14,7 @@ internal static class CoefficientFigures
     /// <summary>The coefficients in the order of the design's columns.</summary>
     public static IReadOnlyList<CoefficientResult> Of(LeastSquaresFit fit, double confidence)
     {
-        var quantile = fit.IsExact ? double.NaN : StudentT.UpperQuantile((1.0 - confidence) / 2.0, fit.ResidualDegrees);
+        var quantile = fit.IsExact ? double.NaN : StudentT.UpperQuantile(ConfidenceLevel.UpperTail(confidence), fit.ResidualDegrees);
         var standardised = StandardisedCoefficient.Of(fit);
         var results = new CoefficientResult[fit.Columns];
         for (var column = 0; column < results.Length; column++)
