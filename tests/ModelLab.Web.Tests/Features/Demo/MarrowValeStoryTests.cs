@@ -1,5 +1,5 @@
-using ModelLab.Statistics.Designs;
 using ModelLab.Statistics.Description;
+using ModelLab.Statistics.Designs;
 using Xunit;
 
 namespace ModelLab.Web.Tests.Features.Demo;
