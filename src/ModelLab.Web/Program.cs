@@ -4,9 +4,9 @@ using ModelLab.Web.Settings;
 using ModelLab.Web.Startup;
 using ModelLab.Web.Verbs;
 
-if (VerbLine.IsVerb(args))
+if (VerbLine.Find(args) is { } words)
 {
-    return await VerbLine.RunAsync(args, Console.Out, Console.Error, CancellationToken.None);
+    return await VerbLine.RunAsync(words, Console.Out, Console.Error, CancellationToken.None);
 }
 
 try

@@ -1,9 +1,15 @@
 using ModelLab.Projects.Entries;
+using ModelLab.Projects.Modelling;
 using ModelLab.Projects.People;
 using ModelLab.Projects.Storage;
 using ModelLab.Projects.Views;
 
 namespace ModelLab.Projects.Datasets;
+
+/// <summary>A variable as described.</summary>
+/// <param name="Variable">Its description.</param>
+/// <param name="Reference">Name of the reference category; null where it enters as a number.</param>
+public sealed record DescribedVariable(VariableView Variable, string? Reference);
 
 /// <summary>Changes or confirms the description of a variable. Paths keep the dictionary with which they started.</summary>
 public sealed class DescribeVariable(ProjectGate gate, IProjectStore store, ISourceVault vault, VariableStates states)
@@ -15,7 +21,7 @@ public sealed class DescribeVariable(ProjectGate gate, IProjectStore store, ISou
     /// <param name="variable">Id or name of the variable.</param>
     /// <param name="change">What changes; nothing: the description is confirmed as it is.</param>
     /// <param name="cancellation">Stops the work.</param>
-    public async Task<VariableView> ExecuteAsync(
+    public async Task<DescribedVariable> ExecuteAsync(
         Caller caller, string projectId, string datasetId, string variable, VariableChange change, CancellationToken cancellation)
     {
         var admission = await gate.EnterAsync(caller, projectId, Role.Analyst, cancellation);
@@ -43,7 +49,21 @@ public sealed class DescribeVariable(ProjectGate gate, IProjectStore store, ISou
                 }
             },
             cancellation);
-        return await store.ReadAsync(projectId, m => DataDictionary.At(m, found.Dataset).Require(found.Variable.VariableId), cancellation);
+        var described = await store.ReadAsync(projectId, m => DataDictionary.At(m, found.Dataset).Require(found.Variable.VariableId), cancellation);
+        return new DescribedVariable(described, Reference(described, contents));
+    }
+
+    private static string? Reference(VariableView variable, SourceContents contents)
+    {
+        if (DatasetColumns.EntersAsNumber(variable, contents))
+        {
+            return null;
+        }
+
+        var categories = contents.Categories(variable.Name);
+        return variable.ReferenceCategory is { } index
+            ? categories[index]
+            : categories.FirstOrDefault(c => !variable.MissingCodes.Contains(c, StringComparer.Ordinal));
     }
 
     private sealed record Found(DatasetView Dataset, SourceView Source, VariableView Variable);

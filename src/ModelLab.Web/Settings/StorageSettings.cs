@@ -22,9 +22,9 @@ public sealed class StorageSettings : ISettings
     [Range(1, 24 * 30)]
     public int OrphanHours { get; set; } = 24;
 
-    /// <summary>Largest body of any request except an upload, in bytes.</summary>
+    /// <summary>Largest body of any request except an upload, in bytes. The default takes a decision that names a million rows.</summary>
     [Range(16 * 1024, 64 * 1024 * 1024)]
-    public long MaximumRequestBytes { get; set; } = 2 * 1024 * 1024;
+    public long MaximumRequestBytes { get; set; } = 8 * 1024 * 1024;
 
     /// <inheritdoc/>
     public IEnumerable<SettingProblem> Check()

@@ -18,9 +18,29 @@ public static class VerbLine
     /// <summary>All verbs but <c>help</c>.</summary>
     public static IReadOnlyList<IVerb> All { get; } = [new CreateTokenVerb(), new BackupVerb(), new RestoreVerb(), new CheckVerb(), new HealthVerb()];
 
-    /// <summary>Whether a command line asks for a verb. Without one, the program serves; its options are settings then.</summary>
-    public static bool IsVerb(IReadOnlyList<string> words) =>
-        words.Count > 0 && (!words[0].StartsWith('-') || words[0] is "--help" or "-h");
+    /// <summary>
+    /// The words of a verb, itself first, or null where a command line asks to serve: it holds settings alone then. Settings may stand
+    /// before the verb; they are put behind it.
+    /// </summary>
+    public static IReadOnlyList<string>? Find(IReadOnlyList<string> words)
+    {
+        var settings = new List<string>();
+        for (var i = 0; i < words.Count; i++)
+        {
+            if (!words[i].StartsWith('-') || words[i] is "--help" or "-h")
+            {
+                return [words[i], .. words.Skip(i + 1), .. settings];
+            }
+
+            settings.Add(words[i]);
+            if (!words[i].Contains('=', StringComparison.Ordinal) && i + 1 < words.Count && !words[i + 1].StartsWith('-'))
+            {
+                settings.Add(words[++i]);
+            }
+        }
+
+        return null;
+    }
 
     /// <summary>Runs a verb.</summary>
     /// <returns>The exit code: 0 done, 1 not, 2 for a wrong command line.</returns>

@@ -33,10 +33,16 @@ public sealed class VerbArgumentsTests
     public void The_health_of_a_server_is_asked_where_this_machine_reaches_it(string urls, string asked) => Assert.Equal(asked, HealthVerb.AddressToAsk(urls).ToString());
 
     [Theory]
-    [InlineData(true, "backup")]
-    [InlineData(true, "nonsense")]
-    [InlineData(true, "--help")]
-    [InlineData(false, "--urls", "http://localhost:1")]
-    [InlineData(false)]
-    public void A_first_word_without_dashes_is_a_verb(bool verb, params string[] words) => Assert.Equal(verb, VerbLine.IsVerb(words));
+    [InlineData("backup", "backup")]
+    [InlineData("nonsense --x", "nonsense", "--x")]
+    [InlineData("--help", "--help")]
+    [InlineData("check --environment Development --urls=http://localhost:1", "--environment", "Development", "--urls=http://localhost:1", "check")]
+    [InlineData(null, "--urls", "http://localhost:1")]
+    [InlineData(null, "--environment=Testing", "--ModelLab:DataFolder", "here")]
+    [InlineData(null)]
+    public void The_first_word_that_is_no_setting_is_the_verb(string? found, params string[] words)
+    {
+        var verb = VerbLine.Find(words);
+        Assert.Equal(found, verb is null ? null : string.Join(' ', verb));
+    }
 }

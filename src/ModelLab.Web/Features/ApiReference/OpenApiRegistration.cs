@@ -1,9 +1,6 @@
-using System.Text.Json.Nodes;
 using Microsoft.AspNetCore.Authorization;
 using Microsoft.AspNetCore.OpenApi;
 using Microsoft.OpenApi;
-using ModelLab.Ledger;
-using ModelLab.Statistics.Designs;
 using ModelLab.Web.Http;
 
 namespace ModelLab.Web.Features.ApiReference;
@@ -21,7 +18,7 @@ public static class OpenApiRegistration
     {
         options.AddDocumentTransformer(DescribeDocument);
         options.AddOperationTransformer(DescribeOperation);
-        options.AddSchemaTransformer(DescribeSchema);
+        options.AddSchemaTransformer(ApiSchemas.Describe);
     });
 
     private static Task DescribeDocument(OpenApiDocument document, OpenApiDocumentTransformerContext context, CancellationToken cancellation)
@@ -84,76 +81,8 @@ public static class OpenApiRegistration
             operation.Responses[status] = new OpenApiResponse
             {
                 Description = description,
-                Content = new Dictionary<string, OpenApiMediaType> { [Problems.MediaType] = new() { Schema = ProblemSchema() } },
+                Content = new Dictionary<string, OpenApiMediaType> { [Problems.MediaType] = new() { Schema = ApiSchemas.Problem() } },
             };
         }
-    }
-
-    private static OpenApiSchema ProblemSchema() => new()
-    {
-        Type = JsonSchemaType.Object,
-        Description = "Problem details (RFC 9457).",
-        Properties = new Dictionary<string, IOpenApiSchema>
-        {
-            ["type"] = new OpenApiSchema { Type = JsonSchemaType.String },
-            ["title"] = new OpenApiSchema { Type = JsonSchemaType.String },
-            ["status"] = new OpenApiSchema { Type = JsonSchemaType.Integer },
-            ["detail"] = new OpenApiSchema { Type = JsonSchemaType.String, Description = "What is wrong and what to do, in plain words." },
-            ["instance"] = new OpenApiSchema { Type = JsonSchemaType.String },
-            ["kind"] = new OpenApiSchema { Type = JsonSchemaType.String, Description = "A stable word for programs." },
-            ["traceId"] = new OpenApiSchema { Type = JsonSchemaType.String },
-            ["errors"] = new OpenApiSchema
-            {
-                Type = JsonSchemaType.Array,
-                Items = new OpenApiSchema
-                {
-                    Type = JsonSchemaType.Object,
-                    Properties = new Dictionary<string, IOpenApiSchema>
-                    {
-                        ["row"] = new OpenApiSchema { Type = JsonSchemaType.Integer | JsonSchemaType.Null },
-                        ["column"] = new OpenApiSchema { Type = JsonSchemaType.String | JsonSchemaType.Null },
-                        ["message"] = new OpenApiSchema { Type = JsonSchemaType.String },
-                    },
-                },
-            },
-        },
-    };
-
-    /// <summary>Types with converters of their own are described by hand.</summary>
-    private static Task DescribeSchema(OpenApiSchema schema, OpenApiSchemaTransformerContext context, CancellationToken cancellation)
-    {
-        if (context.JsonTypeInfo.Type == typeof(Microsoft.AspNetCore.Mvc.ProblemDetails))
-        {
-            var problem = ProblemSchema();
-            schema.Description = problem.Description;
-            schema.Properties = problem.Properties;
-        }
-        else if (context.JsonTypeInfo.Type == typeof(Sha256Hash))
-        {
-            schema.Type = JsonSchemaType.String;
-            schema.Pattern = "^[0-9a-f]{64}$";
-            schema.Description = "SHA-256, 64 lower-case hexadecimal digits.";
-        }
-        else if (typeof(Term).IsAssignableFrom(context.JsonTypeInfo.Type))
-        {
-            schema.Type = JsonSchemaType.Object;
-            schema.Description = "A term: {\"variable\":\"x\"}, where a categorical variable is one term, or {\"power\":{\"variable\":\"x\",\"degree\":2}}.";
-            schema.Properties = new Dictionary<string, IOpenApiSchema>
-            {
-                ["variable"] = new OpenApiSchema { Type = JsonSchemaType.String },
-                ["power"] = new OpenApiSchema
-                {
-                    Type = JsonSchemaType.Object,
-                    Properties = new Dictionary<string, IOpenApiSchema>
-                    {
-                        ["variable"] = new OpenApiSchema { Type = JsonSchemaType.String },
-                        ["degree"] = new OpenApiSchema { Type = JsonSchemaType.Integer, Minimum = "2", Maximum = "20" },
-                    },
-                },
-            };
-            schema.Examples = [new JsonObject { ["variable"] = "x" }];
-        }
-
-        return Task.CompletedTask;
     }
 }

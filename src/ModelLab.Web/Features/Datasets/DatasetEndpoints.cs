@@ -3,7 +3,6 @@ using ModelLab.Intake;
 using ModelLab.Intake.Csv;
 using ModelLab.Ledger;
 using ModelLab.Projects.Datasets;
-using ModelLab.Projects.Views;
 using ModelLab.Statistics.Description;
 using ModelLab.Web.Features.Tokens;
 using ModelLab.Web.Http;
@@ -30,7 +29,7 @@ public static class DatasetEndpoints
         group.MapPatch(
                 "/variables/{variable}",
                 async (string project, string dataset, string variable, VariableChange change, ClaimsPrincipal user, DescribeVariable describe, CancellationToken cancellation) =>
-                    TypedResults.Ok(DescribedVariable.Of(await describe.ExecuteAsync(user.ToCaller(), project, dataset, Uri.UnescapeDataString(variable), change, cancellation))))
+                    TypedResults.Ok(DescriptionAnswer.Of(await describe.ExecuteAsync(user.ToCaller(), project, dataset, Uri.UnescapeDataString(variable), change, cancellation))))
             .WithName("DescribeVariable")
             .WithSummary("Changes or confirms the description of a variable, addressed by id or name. Paths keep the dictionary with which they started.")
             .WithProblems(400, 403, 404, 409, 410, 422);
@@ -92,18 +91,20 @@ public sealed record VariableAnswer(
 /// <param name="Unit">Unit.</param>
 /// <param name="Kind">Kind.</param>
 /// <param name="Confirmed">Whether a person has confirmed the description.</param>
+/// <param name="Numeric">Whether its values are numbers.</param>
 /// <param name="Missing">Cells that are missing.</param>
 /// <param name="Distinct">Distinct values.</param>
 /// <param name="MissingCodes">Texts taken as missing besides the empty cell.</param>
-/// <param name="ReferenceIndex">Index of the reference category among the categories in ordinal order, or null for the first.</param>
+/// <param name="ReferenceCategory">Category against which the others are read, or null.</param>
 /// <param name="Note">Anything a reader should know.</param>
 /// <param name="EntryNumber">Number of the entry that records it.</param>
-public sealed record DescribedVariable(
-    string Id, string Name, string? Label, string? Unit, VariableKind Kind, bool Confirmed, long Missing, long Distinct,
-    IReadOnlyList<string> MissingCodes, int? ReferenceIndex, string? Note, long EntryNumber)
+public sealed record DescriptionAnswer(
+    string Id, string Name, string? Label, string? Unit, VariableKind Kind, bool Confirmed, bool Numeric, long Missing, long Distinct,
+    IReadOnlyList<string> MissingCodes, string? ReferenceCategory, string? Note, long EntryNumber)
 {
     /// <summary>The answer for a description.</summary>
-    public static DescribedVariable Of(VariableView view) => new(
-        view.VariableId, view.Name, view.Label, view.Unit, view.Kind, view.Confirmed, view.Missing, view.Distinct, view.MissingCodes,
-        view.ReferenceCategory, view.Note, view.EntryNumber);
+    public static DescriptionAnswer Of(DescribedVariable described) => new(
+        described.Variable.VariableId, described.Variable.Name, described.Variable.Label, described.Variable.Unit, described.Variable.Kind,
+        described.Variable.Confirmed, described.Variable.Numeric, described.Variable.Missing, described.Variable.Distinct, described.Variable.MissingCodes,
+        described.Reference, described.Variable.Note, described.Variable.EntryNumber);
 }

@@ -27,8 +27,8 @@ public sealed class DemoActor(DemoUseCases uses, string projectId, Person person
     }
 
     /// <summary>Describes a variable.</summary>
-    public Task<VariableView> DescribeAsync(DatasetView dataset, string variable, VariableChange change, CancellationToken cancellation) =>
-        uses.Describe.ExecuteAsync(caller, projectId, dataset.Id, variable, change, cancellation);
+    public async Task<VariableView> DescribeAsync(DatasetView dataset, string variable, VariableChange change, CancellationToken cancellation) =>
+        (await uses.Describe.ExecuteAsync(caller, projectId, dataset.Id, variable, change, cancellation)).Variable;
 
     /// <summary>Starts a path and gives it with its first revision.</summary>
     public async Task<PathReading> StartAsync(StartRequest request, CancellationToken cancellation) =>

@@ -102,6 +102,29 @@ public sealed class OpenApiTests(SharedServer shared)
     }
 
     [Fact]
+    public async Task Every_member_of_every_schema_has_a_type()
+    {
+        var offenders = new List<string>();
+        foreach (var (name, schema) in (await DocumentAsync())["components"]!["schemas"]!.AsObject())
+        {
+            Walk(name, schema!.AsObject(), offenders);
+        }
+
+        Assert.Empty(offenders);
+    }
+
+    [Theory]
+    [InlineData("StartRequest", null)]
+    [InlineData("PersonChange", "active,reason")]
+    [InlineData("TokenRequest", "name,scope")]
+    [InlineData("RuleRecord", "direction,criterion")]
+    public async Task What_may_be_left_out_is_not_called_needed(string schema, string? needed)
+    {
+        var described = (await DocumentAsync())["components"]!["schemas"]![schema]!;
+        Assert.Equal(needed ?? string.Empty, string.Join(',', described["required"]?.AsArray().Select(r => r!.GetValue<string>()) ?? []));
+    }
+
+    [Fact]
     public async Task The_page_shows_every_operation_and_asks_nobody_else()
     {
         using var client = shared.Server.Anonymous();
@@ -130,6 +153,41 @@ public sealed class OpenApiTests(SharedServer shared)
 
     private static IEnumerable<Operation> Operations(JsonNode document) =>
         document["paths"]!.AsObject().SelectMany(p => p.Value!.AsObject().Where(o => Methods.Contains(o.Key)).Select(o => new Operation(p.Key, o.Key, o.Value!)));
+
+    private static void Walk(string place, JsonObject schema, List<string> offenders)
+    {
+        if (schema["$ref"] is not null)
+        {
+            return;
+        }
+
+        var choices = (schema["oneOf"] ?? schema["anyOf"])?.AsArray();
+        if (schema["type"] is null && choices is null && schema["enum"] is null)
+        {
+            offenders.Add($"{place} has no type");
+        }
+
+        var types = schema["type"] is JsonArray several ? several.Select(t => t!.GetValue<string>()).ToList() : [schema["type"]?.GetValue<string>() ?? string.Empty];
+        if (types.Contains("array") && schema["items"] is null)
+        {
+            offenders.Add($"{place} does not say what it lists");
+        }
+
+        if (schema["items"] is JsonObject items)
+        {
+            Walk($"{place}[]", items, offenders);
+        }
+
+        foreach (var choice in choices ?? [])
+        {
+            Walk(place, choice!.AsObject(), offenders);
+        }
+
+        foreach (var (name, member) in schema["properties"]?.AsObject() ?? [])
+        {
+            Walk($"{place}.{name}", member!.AsObject(), offenders);
+        }
+    }
 
     private sealed record Operation(string Path, string Method, JsonNode Node);
 }

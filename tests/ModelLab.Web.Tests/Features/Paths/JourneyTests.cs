@@ -21,6 +21,8 @@ public sealed class JourneyTests(SharedServer shared)
         var described = await client.PatchJsonAsync($"{root}/datasets/{dataset}/variables/dose%20(mg)", """{"label":"Dose given","unit":"mg","reason":"From the protocol."}""").JsonAsync(HttpStatusCode.OK);
         Assert.Equal("Dose given", described.Text("label"));
         Assert.True(described["confirmed"]!.GetValue<bool>());
+        var soil = await client.PatchJsonAsync($"{root}/datasets/{dataset}/variables/soil", """{"referenceCategory":"loam","reason":"The common soil."}""").JsonAsync(HttpStatusCode.OK);
+        Assert.Equal("loam", soil.Text("referenceCategory"));
 
         var path = await client.PostJsonAsync($"{root}/paths", $$$"""
             {"name":"Main","datasetId":"{{{dataset}}}","outcome":"yield","reason":"As planned.",
