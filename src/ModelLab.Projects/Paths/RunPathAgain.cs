@@ -5,6 +5,8 @@ using ModelLab.Projects.People;
 using ModelLab.Projects.Preparations;
 using ModelLab.Projects.Storage;
 using ModelLab.Projects.Views;
+using ModelLab.Statistics.Inference;
+using ModelLab.Statistics.Selection;
 
 namespace ModelLab.Projects.Paths;
 
@@ -63,6 +65,7 @@ public sealed class RunPathAgain(ProjectGate gate, IProjectStore store, ISourceV
             run.Contents.Add(run.Data.RowsContent);
             run.RevisionIds[revision.Id] = formed.Body.RevisionId;
             run.Standing = formed.After;
+            run.Results = formed.Fitted.Results;
         }
         catch (RefusedException refused)
         {
@@ -76,12 +79,22 @@ public sealed class RunPathAgain(ProjectGate gate, IProjectStore store, ISourceV
     private static DecisionRecord Decision(Run run, RevisionView revision)
     {
         var decision = revision.Decision;
+        var rule = decision.ByRule ? Rule(run) : null;
         return decision with
         {
+            // The old rule's decision is carried over all the same; that the rule took it is said only where it would take it on these data too.
+            ByRule = rule is { Remove: true } && decision.Term!.Equals(rule.Weakest?.Term),
             Evidence = decision.Kind == DecisionKind.Remove ? DecisionTerms.Evidence(run.Standing!.Last!.Figures, decision.Term!) : null,
             FromRevisionId = decision.FromRevisionId is { } from ? run.RevisionIds.GetValueOrDefault(from) : null,
-            RuleSays = null,
+            RuleSays = rule?.Explanation,
         };
+    }
+
+    /// <summary>What the path's rule says of the model before a step, on the data on which the path runs now.</summary>
+    private static EliminationChoice Rule(Run run)
+    {
+        var rule = run.Standing!.Path.Plan.Rule!;
+        return BackwardElimination.Choose(run.Results!, new ChoosingRule(rule.Criterion, rule.RemoveAbove));
     }
 
     /// <summary>Makes the preparation of an old revision once more on the new dataset, categories taken by name.</summary>
@@ -93,6 +106,7 @@ public sealed class RunPathAgain(ProjectGate gate, IProjectStore store, ISourceV
         }
 
         var old = await store.ReadAsync(run.ProjectId, m => OldPreparation.Read(m, preparationId), cancellation);
+        RequireSameRows(old, run.Old.Dictionary.Dataset);
         var labels = await CategoryLabels.OpenAsync(vault, run.ProjectId, old.Preparation, cancellation);
         var contents = await SourceContents.OpenAsync(vault, run.ProjectId, old.Dictionary.Dataset, cancellation);
         var steps = old.Preparation.Steps.Select(s => Again(s, labels, old.Dictionary, contents)).ToList();
@@ -102,6 +116,19 @@ public sealed class RunPathAgain(ProjectGate gate, IProjectStore store, ISourceV
         run.PreparationIds[preparationId] = run.Preparation.Id;
         run.Labels = built.Labels;
         run.Data = null;
+    }
+
+    /// <summary>Rows are left out by number. Where rows came or went, a number may name another row, which must not be left out in silence.</summary>
+    private static void RequireSameRows(OldPreparation old, DatasetView corrected)
+    {
+        var before = old.Dictionary.Dataset.Rows;
+        if (before != corrected.Rows && old.Preparation.Steps.Any(s => s.Kind is StepKind.ExcludeRows or StepKind.RestoreRows))
+        {
+            throw RefusedException.Invalid(
+                $"The path leaves out rows by their numbers, and the corrected file has {corrected.Rows} rows where the earlier one had {before}: a number may name another row now. "
+                + "Start a new path on the corrected dataset and leave the rows out there.",
+                "datasetId");
+        }
     }
 
     private static StepRequest Again(PreparationStep step, CategoryLabels labels, DataDictionary dictionary, SourceContents contents)
@@ -154,6 +181,8 @@ public sealed class RunPathAgain(ProjectGate gate, IProjectStore store, ISourceV
         public Dictionary<string, string> PreparationIds { get; } = new(StringComparer.Ordinal);
 
         public PathStanding? Standing { get; set; }
+
+        public ModelResults? Results { get; set; }
 
         public PreparationView? Preparation { get; set; }
 
