@@ -109,11 +109,10 @@ internal static class KindProposal
             return VariableKind.Continuous;
         }
 
-        if (CodesOrCounts.Applies(view.Values, view.Whole, view.Minimum!.Value, view.Maximum!.Value))
+        if (CodesOrCounts.Ask(view) is { } codes)
         {
-            var kind = CodesOrCounts.Proposal(column.Name, view.Values, view.Minimum.Value, view.Maximum.Value);
-            questions.Add(CodesOrCounts.Question(view.Values, kind));
-            return kind;
+            questions.Add(codes.Question);
+            return codes.Kind;
         }
 
         if (view.Whole && view.AllDistinct && view.Minimum >= SmallestNumberLikeKey && column.Present > ManyCategories)

@@ -31,6 +31,23 @@ public sealed class CodesOrCountsTests
         Assert.Equal(["codes-or-counts"], Fixture.Codes(Fixture.Column("answer", Repeat(20, "1.0", "2.0", "3.0"))));
 
     [Theory]
+    [InlineData("answer", "99", VariableKind.Categorical)]
+    [InlineData("answer", "-9", VariableKind.Categorical)]
+    [InlineData("rooms", "99", VariableKind.Continuous)]
+    public void A_suspected_missing_code_does_not_hide_the_codes(string name, string suspect, VariableKind proposal)
+    {
+        var column = Fixture.Column(name, Repeat(8, "1", "2", "3", "4", "5", suspect));
+
+        Assert.Equal(proposal, column.ProposedKind);
+        Assert.Equal(["codes-or-counts", "missing-code-suspected"], Fixture.Codes(column));
+        Assert.StartsWith($"Besides {suspect} the column holds only 5 different whole numbers.", column.Questions[0].Message, StringComparison.Ordinal);
+    }
+
+    [Fact]
+    public void A_suspected_missing_code_makes_no_codes_of_a_measure() =>
+        Assert.Equal(["missing-code-suspected"], Fixture.Codes(Fixture.Column("income", Repeat(8, "1200", "1350", "1800", "2100", "-99"))));
+
+    [Theory]
     [InlineData(1, 11)]
     [InlineData(-2, 2)]
     public void Many_values_or_negative_ones_are_measures(int from, int to)
