@@ -1,3 +1,4 @@
+using System.Runtime.Intrinsics;
 using Microsoft.AspNetCore.Hosting.Server;
 using Microsoft.AspNetCore.Hosting.Server.Features;
 using ModelLab.Web.Settings;
@@ -15,8 +16,12 @@ public static partial class StartupAnnouncement
         {
             var addresses = app.Services.GetRequiredService<IServer>().Features.Get<IServerAddressesFeature>()?.Addresses ?? [];
             LogListening(app.Logger, string.Join(", ", addresses), app.Environment.EnvironmentName, settings.DataFolder, settings.KeysFolder);
+            LogArithmetic(app.Logger, Vector512.IsHardwareAccelerated ? 512 : Vector256.IsHardwareAccelerated ? 256 : 128, Environment.ProcessorCount);
         });
     }
+
+    [LoggerMessage(LogLevel.Information, "It computes with vectors of {Bits} bits on {Processors} processor(s); results depend on neither")]
+    private static partial void LogArithmetic(ILogger logger, int bits, int processors);
 
     [LoggerMessage(LogLevel.Information, "ModelLab listens on {Addresses} ({Environment}). Its data are in {DataFolder}, its keys in {KeysFolder}")]
     private static partial void LogListening(ILogger logger, string addresses, string environment, string dataFolder, string keysFolder);

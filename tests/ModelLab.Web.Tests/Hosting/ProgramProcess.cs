@@ -30,6 +30,9 @@ public sealed class ProgramProcess : IDisposable
 
     public string Folder => folder;
 
+    /// <summary>Environment variables of the next run, beside and before the usual ones.</summary>
+    public Dictionary<string, string> Environment { get; } = new(StringComparer.Ordinal);
+
     public string Output
     {
         get
@@ -91,7 +94,8 @@ public sealed class ProgramProcess : IDisposable
         }
     }
 
-    public void Dispose()
+    /// <summary>Ends the server, as a power cut would.</summary>
+    public void Stop()
     {
         if (process is { HasExited: false })
         {
@@ -100,6 +104,12 @@ public sealed class ProgramProcess : IDisposable
         }
 
         process?.Dispose();
+        process = null;
+    }
+
+    public void Dispose()
+    {
+        Stop();
         Directory.Delete(folder, recursive: true);
     }
 
@@ -128,6 +138,11 @@ public sealed class ProgramProcess : IDisposable
         start.Environment["ASPNETCORE_URLS"] = Address;
         start.Environment["ASPNETCORE_ENVIRONMENT"] = "Production";
         start.Environment["ModelLab__DataFolder"] = DataFolder;
+        foreach (var (name, value) in Environment)
+        {
+            start.Environment[name] = value;
+        }
+
         return Process.Start(start)!;
     }
 }
