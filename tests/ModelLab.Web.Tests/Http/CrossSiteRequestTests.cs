@@ -52,6 +52,16 @@ public sealed class CrossSiteRequestTests(SharedServer shared)
         Assert.False(answer.Headers.Contains("Server"));
     }
 
+    [Theory]
+    [InlineData("https://localhost/health/live", true)]
+    [InlineData("http://localhost/health/live", false)]
+    public async Task Transport_security_is_asked_for_where_there_is_any(string address, bool asked)
+    {
+        using var client = shared.Server.Anonymous();
+        using var answer = await client.FetchAsync(address);
+        Assert.Equal(asked, answer.Headers.Contains("Strict-Transport-Security"));
+    }
+
     [Fact]
     public void The_policy_for_content_allows_nothing_inline_and_nobody_else()
     {

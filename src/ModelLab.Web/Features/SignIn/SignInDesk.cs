@@ -1,4 +1,5 @@
 using Microsoft.AspNetCore.Identity;
+using ModelLab.Projects;
 using ModelLab.Store.Accounts;
 using ModelLab.Web.Settings;
 
@@ -33,6 +34,7 @@ public sealed record SignInResult(SignInOutcome Outcome, Account? Account = null
 public sealed partial class SignInDesk(SignInAttempts attempts, UserManager<Account> accounts, IPasswordHasher<Account> hasher, TimeProvider clock, ILogger<SignInDesk> log)
 {
     /// <summary>Tries a password.</summary>
+    /// <exception cref="RefusedException">The account was changed at the same moment.</exception>
     public async Task<SignInResult> TryAsync(string email, string password, string address, CancellationToken cancellation)
     {
         if (attempts.Addresses.LockedUntil(address) is { } until)
@@ -117,6 +119,11 @@ public sealed partial class SignInDesk(SignInAttempts attempts, UserManager<Acco
     private async Task SaveAsync(Account account)
     {
         var saved = await accounts.UpdateAsync(account);
+        if (saved.Errors.Any(e => e.Code == nameof(IdentityErrorDescriber.ConcurrencyFailure)))
+        {
+            throw new RefusedException(RefusalKind.Conflict, "The account was changed at the same moment. Try again.");
+        }
+
         if (!saved.Succeeded)
         {
             throw new InvalidOperationException($"The account could not be saved: {string.Join("; ", saved.Errors.Select(e => e.Code))}.");

@@ -27,7 +27,12 @@ public static class SignInRegistration
         services.AddDataProtection()
             .SetApplicationName("ModelLab")
             .PersistKeysToFileSystem(new DirectoryInfo(Path.Combine(settings.Storage.KeysFolder, "sessions")));
-        services.AddIdentityCore<Account>(o => o.User.RequireUniqueEmail = true)
+        services.AddIdentityCore<Account>(o =>
+            {
+                // The user name is the e-mail address, whose characters are not for this library to choose.
+                o.User.AllowedUserNameCharacters = string.Empty;
+                o.User.RequireUniqueEmail = true;
+            })
             .AddEntityFrameworkStores<ModelLabContext>()
             .AddSignInManager();
         services.Configure<PasswordHasherOptions>(o => o.IterationCount = HashingRounds);

@@ -2,6 +2,9 @@ using System.Net;
 using System.Security.Cryptography;
 using System.Text;
 using Microsoft.AspNetCore.Http;
+using Microsoft.AspNetCore.Http.Metadata;
+using Microsoft.AspNetCore.Routing;
+using Microsoft.Extensions.DependencyInjection;
 using ModelLab.Web.Http;
 using ModelLab.Web.Tests.Hosting;
 using Xunit;
@@ -93,6 +96,15 @@ public sealed class UploadTests(SharedServer shared)
         var problem = await client.UploadAsync(project, [.. File, (byte)'\n']).ProblemAsync(HttpStatusCode.RequestEntityTooLarge);
         Assert.Equal("tooLarge", problem.Text("kind"));
         Assert.Single((await client.FetchAsync($"/api/v1/projects/{project}").JsonAsync(HttpStatusCode.OK))["datasets"]!.AsArray());
+    }
+
+    [Fact]
+    public void The_limit_on_requests_is_raised_for_uploads_alone()
+    {
+        var raised = shared.Server.Services.GetRequiredService<EndpointDataSource>().Endpoints.Where(e => e.Metadata.GetMetadata<IRequestSizeLimitMetadata>() is not null);
+        var endpoint = Assert.IsType<RouteEndpoint>(Assert.Single(raised));
+        Assert.Equal("/api/v1/projects/{project}/sources", "/" + endpoint.RoutePattern.RawText!.Trim('/'));
+        Assert.InRange(endpoint.Metadata.GetMetadata<IRequestSizeLimitMetadata>()!.MaxRequestBodySize!.Value, 1L << 30, (1L << 30) + (1L << 20));
     }
 
     [Fact]
