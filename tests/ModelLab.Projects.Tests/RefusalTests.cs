@@ -59,6 +59,18 @@ public sealed class RefusalTests : IDisposable
     }
 
     [Fact]
+    public async Task A_reference_category_for_a_variable_without_categories()
+    {
+        var project = await bench.ProjectAsync();
+        var source = await bench.SourceAsync(project, "y,x\n5.5,1.5\n6.5,2.5\n7.5,3.5\n8.5,4.5\n");
+        await RefusedAsync(project, RefusalKind.Invalid, "'x' is none of them", () => bench.Get<DescribeVariable>().ExecuteAsync(
+            Bench.Analyst, project, source.Dataset.Id, "x", new VariableChange(null, null, null, null, "2.5", null, "the base"), Bench.Stop));
+        var described = await bench.Get<DescribeVariable>().ExecuteAsync(
+            Bench.Analyst, project, source.Dataset.Id, "x", new VariableChange(null, null, VariableKind.Categorical, null, "2.5", null, "four sites"), Bench.Stop);
+        Assert.Equal("2.5", described.Reference);
+    }
+
+    [Fact]
     public async Task An_outcome_without_variance()
     {
         var project = await bench.ProjectAsync();

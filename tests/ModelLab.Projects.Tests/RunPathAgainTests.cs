@@ -49,6 +49,7 @@ public sealed class RunPathAgainTests : IDisposable
         var shorter = await bench.SourceAsync(project, Table(39, slopeOfB: 0, lift: 0), previousDatasetId: dataset);
         var entries = bench.Store.Entries(project).Count;
         var refused = await Assert.ThrowsAsync<RefusedException>(() => AgainAsync(project, path, shorter.Dataset.Id));
+        Assert.Contains("revision 3 (excludeRows)", refused.Message, StringComparison.Ordinal);
         Assert.Contains("39 rows where the earlier one had 40", refused.Message, StringComparison.Ordinal);
         Assert.Equal(entries, bench.Store.Entries(project).Count);
 

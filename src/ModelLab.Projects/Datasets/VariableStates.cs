@@ -51,6 +51,13 @@ public sealed class VariableStates(DatasetColumns columns)
 
         if (change.ReferenceCategory is not null)
         {
+            if (state.Kind is not (VariableKind.Binary or VariableKind.Categorical or VariableKind.Ordered))
+            {
+                throw RefusedException.Invalid(
+                    $"Only binary, categorical and ordered variables have a reference category, and '{state.Name}' is none of them. Send the kind with it, or leave it out. Nothing was stored.",
+                    "referenceCategory");
+            }
+
             state = state with { ReferenceCategory = IndexOf(state, contents, change.ReferenceCategory) };
         }
 

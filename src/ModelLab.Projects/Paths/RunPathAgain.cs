@@ -1,3 +1,4 @@
+using System.Text.Json;
 using ModelLab.Projects.Datasets;
 using ModelLab.Projects.Entries;
 using ModelLab.Projects.Modelling;
@@ -71,7 +72,7 @@ public sealed class RunPathAgain(ProjectGate gate, IProjectStore store, ISourceV
         {
             throw new RefusedException(
                 refused.Kind,
-                $"The decision of revision {revision.Number} ({revision.Decision.Kind}{(revision.Decision.Term is { } term ? $" {term}" : string.Empty)}) no longer holds on the corrected data: {refused.Message} Nothing was stored.",
+                $"The decision of revision {revision.Number} ({JsonNamingPolicy.CamelCase.ConvertName(revision.Decision.Kind.ToString())}{(revision.Decision.Term is { } term ? $" {term}" : string.Empty)}) no longer holds on the corrected data: {refused.Message} Nothing was stored.",
                 refused.Details);
         }
     }

@@ -25,7 +25,7 @@ public sealed class ManageMembers(ProjectGate gate, IProjectStore store, IPeople
             {
                 if (model.Find<MemberView>(person.Id) is { Role: { } existing })
                 {
-                    throw new RefusedException(RefusalKind.Conflict, $"{person.Name} is a member already, with the role {existing}. Change the role instead.");
+                    throw new RefusedException(RefusalKind.Conflict, $"{person.Name} is a member already, with the role {existing.ToString().ToLowerInvariant()}. Change the role instead.");
                 }
             },
             cancellation);

@@ -14,7 +14,7 @@ public static class StatusProblems
             StatusCodes.Status404NotFound => ("notFound", $"There is nothing at {context.Request.Path}. The addresses are listed at /openapi/v1.json."),
             StatusCodes.Status405MethodNotAllowed => ("method", $"{context.Request.Method} is not offered here; offered is {context.Response.Headers.Allow}."),
             StatusCodes.Status406NotAcceptable => ("notAcceptable", "None of the media types asked for is offered here."),
-            StatusCodes.Status415UnsupportedMediaType => ("mediaType", "The body has a Content-Type that is not read here: application/json, for an upload multipart/form-data."),
+            StatusCodes.Status415UnsupportedMediaType => ("mediaType", "The Content-Type of the body is not read here. Send application/json, for an upload multipart/form-data."),
             _ => ("refused", "The request was not carried out."),
         };
         if (status == StatusCodes.Status401Unauthorized && context.Response.Headers.WWWAuthenticate.Count == 0)
