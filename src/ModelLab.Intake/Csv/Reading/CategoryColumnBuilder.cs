@@ -40,6 +40,10 @@ internal sealed class CategoryColumnBuilder : ColumnBuilder
             return null;
         }
 
+        // as where the distinct values are listed: a text keeps the spaces around it, a number does not
+        var trimmed = CellText.Trim(cell);
+        cell = CellShape.OfTrimmed(trimmed).IsNumber ? trimmed : cell;
+
         if (cell.Length > IntakeLimits.CellBytes)
         {
             return CellTooLong.Message(cell.Length);
