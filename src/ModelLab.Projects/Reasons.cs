@@ -1,3 +1,5 @@
+using System.Globalization;
+
 namespace ModelLab.Projects;
 
 /// <summary>Checks of what people type, in one place.</summary>
@@ -23,7 +25,7 @@ public static class Reasons
     public static string Text(string? text, string field, string whenEmpty, int longest = LongestText)
     {
         var trimmed = text?.Trim();
-        if (string.IsNullOrEmpty(trimmed))
+        if (trimmed is null || trimmed.All(c => char.IsWhiteSpace(c) || char.GetUnicodeCategory(c) == UnicodeCategory.Format))
         {
             throw RefusedException.Invalid(whenEmpty + " Nothing was stored.", field);
         }

@@ -19,7 +19,7 @@ public sealed class ManageComments(ProjectGate gate, IProjectStore store)
     public async Task<CommentView> MakeAsync(Caller caller, string projectId, Place? place, string? text, CancellationToken cancellation)
     {
         var admission = await gate.EnterAsync(caller, projectId, Role.Reviewer, cancellation);
-        if (place is null)
+        if (place is not { Kind: not null, Id: not null })
         {
             throw RefusedException.Invalid("Say what the comment is about: {\"kind\":\"revision\",\"id\":…}.", "place");
         }

@@ -79,14 +79,14 @@ public sealed class ReadDataset(ProjectGate gate, IProjectStore store, ISourceVa
 
     private static VariableReading Reading(VariableView variable, SourceContents contents, Column? column)
     {
-        var reference = variable.ReferenceCategory is { } index ? contents.Categories(variable.Name)[index] : null;
         var counts = column is CategoryColumn category ? Descriptives.Describe(category) : null;
+        var present = contents.Present(variable.Name, variable.MissingCodes);
         return new VariableReading(
             variable,
-            reference ?? counts?.Categories.FirstOrDefault(c => !variable.MissingCodes.Contains(c.Category, StringComparer.Ordinal))?.Category,
+            counts is not null && contents.Reference(variable) is { } reference ? contents.Categories(variable.Name)[reference] : null,
             contents.Of(variable.Name).Questions,
             column is NumberColumn number ? Descriptives.Describe(number) : null,
-            counts is null ? null : counts with { Categories = [.. counts.Categories.Where(c => !variable.MissingCodes.Contains(c.Category, StringComparer.Ordinal))] });
+            counts is null ? null : counts with { Categories = [.. counts.Categories.Where(c => present.Contains(c.Index))] });
     }
 
     private sealed record Found(DataDictionary Dictionary, SourceView Source);

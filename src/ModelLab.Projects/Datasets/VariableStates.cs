@@ -13,7 +13,7 @@ namespace ModelLab.Projects.Datasets;
 /// <param name="Unit">Unit of measurement.</param>
 /// <param name="Kind">Kind.</param>
 /// <param name="MissingCodes">All texts that mean missing, besides the empty cell.</param>
-/// <param name="ReferenceCategory">Category against which the others are read.</param>
+/// <param name="ReferenceCategory">Category against which the others are read; cleared: the first.</param>
 /// <param name="Note">Anything a reader should know.</param>
 /// <param name="Reason">Why.</param>
 public sealed record VariableChange(
@@ -44,27 +44,43 @@ public sealed class VariableStates(DatasetColumns columns)
             Kind = change.Kind ?? before.Kind,
             Confirmed = true,
         };
-        if (change.MissingCodes is not null && !change.MissingCodes.ToHashSet(StringComparer.Ordinal).SetEquals(before.MissingCodes))
+        if (change.MissingCodes is not null)
         {
-            state = await RecountAsync(projectId, source, state with { MissingCodes = Codes(change.MissingCodes) }, cancellation);
+            state = await CountedAsync(projectId, source, contents, state with { MissingCodes = Codes(change.MissingCodes) }, cancellation);
         }
 
         if (change.ReferenceCategory is not null)
         {
-            if (state.Kind is not (VariableKind.Binary or VariableKind.Categorical or VariableKind.Ordered))
+            if (change.ReferenceCategory.Length > 0 && !HasCategories(state.Kind))
             {
                 throw RefusedException.Invalid(
                     $"Only binary, categorical and ordered variables have a reference category, and '{state.Name}' is none of them. Send the kind with it, or leave it out. Nothing was stored.",
                     "referenceCategory");
             }
 
-            state = state with { ReferenceCategory = IndexOf(state, contents, change.ReferenceCategory) };
+            state = state with { ReferenceCategory = change.ReferenceCategory.Length == 0 ? null : IndexOf(state, contents, change.ReferenceCategory) };
         }
 
         await RequireKindAsync(projectId, source, contents, state, cancellation);
-        return state.ReferenceCategory is { } index && IsMissing(state, contents.Categories(state.Name)[index])
+        return state.ReferenceCategory is { } index && !(HasCategories(state.Kind) && contents.Present(state.Name, state.MissingCodes).Contains(index))
             ? state with { ReferenceCategory = null }
             : state;
+    }
+
+    /// <summary>Whether variables of a kind have categories, and so a reference among them.</summary>
+    public static bool HasCategories(VariableKind kind) => kind is VariableKind.Binary or VariableKind.Categorical or VariableKind.Ordered;
+
+    /// <summary>
+    /// A state with the counts that its missing codes give: those of the first reading where the codes are the proposed ones, else
+    /// counted in the source. They depend on nothing else, so that a replay finds them again.
+    /// </summary>
+    public async Task<VariableState> CountedAsync(
+        string projectId, SourceView source, SourceContents contents, VariableState state, CancellationToken cancellation)
+    {
+        var seen = contents.Of(state.Name);
+        return seen.MissingCodes.Where(c => c.Length > 0).ToHashSet(StringComparer.Ordinal).SetEquals(state.MissingCodes)
+            ? state with { Missing = seen.Missing, Distinct = seen.Distinct, Numeric = seen.Numeric }
+            : await RecountAsync(projectId, source, state, cancellation);
     }
 
     /// <summary>Names of the fields in which two states differ.</summary>
@@ -139,19 +155,18 @@ public sealed class VariableStates(DatasetColumns columns)
     private static int IndexOf(VariableState state, SourceContents contents, string category)
     {
         var categories = contents.Categories(state.Name);
+        var present = contents.Present(state.Name, state.MissingCodes);
         for (var i = 0; i < categories.Count; i++)
         {
-            if (string.Equals(categories[i], category, StringComparison.Ordinal) && !IsMissing(state, category))
+            if (string.Equals(categories[i], category, StringComparison.Ordinal) && present.Contains(i))
             {
                 return i;
             }
         }
 
         throw RefusedException.Invalid(
-            $"'{category}' is no category of '{state.Name}'. The categories are: {string.Join(", ", categories.Where(c => !IsMissing(state, c)).Take(40))}.", "referenceCategory");
+            $"'{category}' is no category of '{state.Name}'. The categories are: {string.Join(", ", present.Take(40).Select(i => categories[i]))}.", "referenceCategory");
     }
-
-    private static bool IsMissing(VariableState state, string category) => state.MissingCodes.Contains(category, StringComparer.Ordinal);
 
     private static IReadOnlyList<string> Codes(IReadOnlyList<string> codes)
     {

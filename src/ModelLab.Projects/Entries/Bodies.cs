@@ -56,7 +56,7 @@ public sealed record PathStarted(string PathId, string Name, PathPlan Plan, stri
 /// <param name="Figures">What was computed.</param>
 /// <param name="FullModelMeanSquare">Residual mean square of the model with all candidates on the same rows, behind Cp; null where it cannot be fitted.</param>
 /// <param name="Fingerprint">SHA-256 of all that the figures depend on.</param>
-/// <param name="Methods">Versions of the methods that made the figures.</param>
+/// <param name="Methods">Versions of the methods that made the figures, and of the rules that looked for findings.</param>
 public sealed record RevisionMade(
     string RevisionId, string PathId, int Number, DecisionRecord Decision, IReadOnlyList<Term> Terms, string? PreparationId,
     AnalysedRows Rows, RevisionFigures Figures, double? FullModelMeanSquare, Sha256Hash Fingerprint, IReadOnlyList<string> Methods) : IEntryBody;

@@ -79,7 +79,11 @@ public enum ChoosingDirection
 }
 
 /// <summary>A path's choosing rule.</summary>
-public sealed record RuleRecord(ChoosingDirection Direction, Criterion Criterion, double? RemoveAbove);
+public sealed record RuleRecord(ChoosingDirection Direction, Criterion Criterion, double? RemoveAbove)
+{
+    /// <summary>The rule as Statistics takes it.</summary>
+    public ChoosingRule ToRule() => new(Criterion, RemoveAbove);
+}
 
 /// <summary>What a path fixes for all its revisions.</summary>
 /// <param name="DatasetId">The dataset.</param>
@@ -123,7 +127,7 @@ public enum DecisionKind
 /// <param name="Kind">What was done.</param>
 /// <param name="Reason">Why.</param>
 /// <param name="Term">The term concerned, or null.</param>
-/// <param name="ByRule">Whether the path's rule took it; else a person did.</param>
+/// <param name="ByRule">Whether the path's rule took it; else a person did, also where the person repeated what a rule had done on other data.</param>
 /// <param name="Evidence">For a removed term: its figures in the revision before.</param>
 /// <param name="Rows">Row numbers concerned, or null.</param>
 /// <param name="Cause">Cause of an exclusion, or null.</param>

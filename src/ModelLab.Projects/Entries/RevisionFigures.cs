@@ -5,8 +5,12 @@ public sealed record RevisionCoefficient(
     string Term, int? Category, double Estimate, double? Lower, double? Upper, double? P, double? StandardError, double? T,
     double? Standardized, double? PartialR, double? SemiPartialR, double? Vif);
 
-/// <summary>The test of one term of a revision given all others.</summary>
-public sealed record RevisionTerm(string Term, int Df, double SumOfSquares, double? F, double? P, double? PartialRSquared, double? Vif, bool Removable);
+/// <summary>
+/// The test of one term of a revision given all others. The reference is the index of the category against which its coefficients are
+/// read; null for a number. It is the dictionary's where that has rows among those analysed, else the first that has.
+/// </summary>
+public sealed record RevisionTerm(
+    string Term, int Df, double SumOfSquares, double? F, double? P, double? PartialRSquared, double? Vif, bool Removable, int? Reference = null);
 
 /// <summary>What a revision would be without one removable term.</summary>
 public sealed record RevisionLoss(

@@ -33,6 +33,15 @@ public static class FindingRules
     /// <summary>All rules, in the order in which findings are raised.</summary>
     public static IReadOnlyList<IFindingRule> All { get; } = [new TiedPredictorsRule(), new CodedCategoryRule()];
 
+    /// <summary>Name and version of each, as a revision records which rules looked at it.</summary>
+    public static IReadOnlyList<string> Versions { get; } = [.. All.Select(VersionOf)];
+
     /// <summary>All findings at a revision.</summary>
     public static IReadOnlyList<FindingRecord> Look(RevisionEvidence evidence) => [.. All.SelectMany(r => r.Look(evidence))];
+
+    /// <summary>Those of the rules that looked at a revision when it was made: a rule that came later says nothing about the record.</summary>
+    public static IReadOnlyList<FindingRecord> LookAgain(RevisionEvidence evidence, IReadOnlyList<string> versions) =>
+        [.. All.Where(r => versions.Contains(VersionOf(r), StringComparer.Ordinal)).SelectMany(r => r.Look(evidence))];
+
+    private static string VersionOf(IFindingRule rule) => string.Create(System.Globalization.CultureInfo.InvariantCulture, $"{rule.Name}/{rule.Version}");
 }

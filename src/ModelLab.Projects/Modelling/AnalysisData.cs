@@ -64,6 +64,12 @@ public sealed class AnalysisDataLoader(IReadModelSource store, ISourceVault vaul
         }
 
         var read = (await columns.ReadAsync(projectId, source, dictionary, [.. names.Where(n => !derived.Makes(n))], cancellation)).ToDictionary(c => c.Name, StringComparer.Ordinal);
+        if (read[plan.Outcome] is CategoryColumn)
+        {
+            throw RefusedException.Invalid(
+                $"'{plan.Outcome}' is described as binary and is not written as 0 and 1; least squares needs numbers. Describe it as continuous if its codes are the numbers that you mean.", plan.Outcome);
+        }
+
         foreach (var column in await derived.ReadAsync(columns, projectId, source, names, cancellation))
         {
             read.Add(column.Name, column);
@@ -75,8 +81,10 @@ public sealed class AnalysisDataLoader(IReadModelSource store, ISourceVault vaul
         if (complete.Rows.Length == 0)
         {
             throw RefusedException.Invalid(
-                "No row is complete on the outcome and all candidate terms. Leave out the variables that are missing most: "
-                + string.Join(", ", complete.Losses.OrderByDescending(l => l.Missing).Take(5).Select(l => $"{l.Variable} ({l.Missing} missing)")) + ".");
+                kept.Length == 0
+                    ? "The preparation leaves no row."
+                    : "No row is complete on the outcome and all candidate terms. Leave out the variables that are missing most: "
+                        + string.Join(", ", complete.Losses.OrderByDescending(l => l.Missing).Take(5).Select(l => $"{l.Variable} ({l.Missing} missing)")) + ".");
         }
 
         var content = RowNumbers.Write(complete.Rows);

@@ -25,14 +25,14 @@ public sealed class DatasetColumns(ISourceVault vault, ColumnCache cache)
         return await ReadAsync(projectId, source, requests, cancellation);
     }
 
-    /// <summary>Reads columns as asked, each once, in the order asked.</summary>
+    /// <summary>Reads columns as asked, in the order asked; the same column may be asked for twice, in the same way.</summary>
     public Task<IReadOnlyList<Column>> ReadAsync(string projectId, SourceView source, IReadOnlyList<ColumnRequest> requests, CancellationToken cancellation) =>
         Task.Run<IReadOnlyList<Column>>(() => Read(projectId, source, requests, cancellation), cancellation);
 
     /// <summary>How a variable enters a model: a 0/1 or measured variable as numbers, every other as categories.</summary>
     public static bool EntersAsNumber(VariableView variable, SourceContents contents) =>
         variable.Numeric && (variable.Kind == VariableKind.Continuous
-            || (variable.Kind == VariableKind.Binary && contents.Categories(variable.Name).Except(variable.MissingCodes).All(c => c is "0" or "1")));
+            || (variable.Kind == VariableKind.Binary && contents.Present(variable.Name, variable.MissingCodes).All(i => contents.Categories(variable.Name)[i] is "0" or "1")));
 
     private static ColumnRequest Request(VariableView variable, SourceContents contents)
     {
@@ -41,8 +41,13 @@ public sealed class DatasetColumns(ISourceVault vault, ColumnCache cache)
             return new ColumnRequest(variable.Name, true, variable.MissingCodes);
         }
 
+        if (variable.Distinct == 0)
+        {
+            throw RefusedException.Invalid($"'{variable.Name}' has no value that is not missing. Leave it out, or look at its missing codes.", variable.Name);
+        }
+
         var categories = contents.Categories(variable.Name);
-        if (categories.Count == 0)
+        if (contents.Reference(variable) is not { } reference)
         {
             throw RefusedException.Invalid(
                 $"'{variable.Name}' has {variable.Distinct} distinct values, more than the {MostCategories} with which a categorical variable can enter a model. "
@@ -51,15 +56,26 @@ public sealed class DatasetColumns(ISourceVault vault, ColumnCache cache)
         }
 
         // A category declared missing keeps its place and loses its rows.
-        var reference = variable.ReferenceCategory is { } index ? categories[index] : categories.First(c => !variable.MissingCodes.Contains(c, StringComparer.Ordinal));
-        return new ColumnRequest(variable.Name, false, variable.MissingCodes, categories, reference);
+        return new ColumnRequest(variable.Name, false, variable.MissingCodes, categories, categories[reference]);
     }
 
     private Column[] Read(string projectId, SourceView source, IReadOnlyList<ColumnRequest> requests, CancellationToken cancellation)
     {
         var keys = requests.Select(r => $"{projectId}/{source.Id}/{JsonSerializer.Serialize(r, ProjectJson.Options)}").ToList();
-        var columns = keys.Select(cache.Find).ToArray();
-        var absent = Enumerable.Range(0, requests.Count).Where(i => columns[i] is null).ToList();
+        var known = new Dictionary<string, Column>(StringComparer.Ordinal);
+        var absent = new List<int>();
+        for (var i = 0; i < requests.Count; i++)
+        {
+            if (cache.Find(keys[i]) is { } held)
+            {
+                known[keys[i]] = held;
+            }
+            else if (!absent.Exists(a => keys[a] == keys[i]))
+            {
+                absent.Add(i);
+            }
+        }
+
         if (absent.Count > 0)
         {
             using var stream = vault.Open(projectId, source.Id);
@@ -67,10 +83,10 @@ public sealed class DatasetColumns(ISourceVault vault, ColumnCache cache)
             foreach (var (place, column) in absent.Zip(table.Columns))
             {
                 cache.Put(keys[place], column);
-                columns[place] = column;
+                known[keys[place]] = column;
             }
         }
 
-        return columns!;
+        return [.. keys.Select(k => known[k])];
     }
 }

@@ -24,7 +24,7 @@ public sealed record FittedRevision(
 /// <summary>Fits the model of a revision. Every figure on record comes from here: decisions, the rule and replay call the same code.</summary>
 public static class RevisionFitter
 {
-    /// <summary>Versions of the methods behind the figures.</summary>
+    /// <summary>Versions of the methods behind the figures, in the order in which they work.</summary>
     public static IReadOnlyList<string> Methods { get; } = [CsvTable.MethodVersion, ModelFitter.MethodVersion, BackwardElimination.MethodVersion];
 
     /// <summary>Fits it.</summary>
@@ -49,7 +49,7 @@ public static class RevisionFitter
                 results = results with { Fit = results.Fit with { Cp = results.Coefficients.Count } };
             }
 
-            return new FittedRevision(terms, results, Figures(data, plan, results, terms), full, Fingerprint(data, plan, terms), fitted);
+            return new FittedRevision(terms, results, Figures(data, plan, design.Codings, results, terms), full, Fingerprint(data, plan, terms), fitted);
         }
         catch (ModelRefusedException refused)
         {
@@ -71,7 +71,8 @@ public static class RevisionFitter
         }
     }
 
-    private static RevisionFigures Figures(AnalysisData data, PathPlan plan, ModelResults results, IReadOnlyList<Term> terms)
+    private static RevisionFigures Figures(
+        AnalysisData data, PathPlan plan, IReadOnlyList<CategoryCoding> codings, ModelResults results, IReadOnlyList<Term> terms)
     {
         var numbers = terms.OfType<VariableTerm>().Select(t => data.Table.Find(t.Variable)).OfType<NumberColumn>().ToList();
         var correlations = Correlations.Pearson(numbers, data.Rows, plan.Confidence);
@@ -79,7 +80,7 @@ public static class RevisionFitter
         return new RevisionFigures(
             [.. results.Coefficients.Select(c => new RevisionCoefficient(
                 c.Term?.Text ?? "intercept", c.CategoryIndex, c.Estimate, c.Lower, c.Upper, c.P, c.StandardError, c.T, c.Standardized, c.PartialR, c.SemiPartialR, c.Vif))],
-            [.. results.Terms.Select(t => new RevisionTerm(t.Term.Text, t.Df, t.SumOfSquares, t.F, t.P, t.PartialRSquared, t.Vif, t.Removable))],
+            [.. results.Terms.Select(t => new RevisionTerm(t.Term.Text, t.Df, t.SumOfSquares, t.F, t.P, t.PartialRSquared, t.Vif, t.Removable, codings.FirstOrDefault(c => c.Term.Equals(t.Term))?.ReferenceIndex))],
             [.. results.Losses.Select(l => new RevisionLoss(
                 l.Term.Text, l.Df, l.F, l.P, l.SumOfSquares, l.RSquaredLoss, l.AdjustedRSquaredChange, l.AicChange, l.AiccChange, l.BicChange))],
             new RevisionFit(
@@ -97,6 +98,7 @@ public static class RevisionFitter
             ["preparation"] = data.Preparation?.Id,
             ["outcome"] = plan.Outcome,
             ["terms"] = new JsonArray([.. terms.Select(t => (JsonNode)t.Text)]),
+            ["candidates"] = new JsonArray([.. plan.Candidates.Select(t => (JsonNode)t.Text)]),
             ["intercept"] = plan.Intercept,
             ["heldIn"] = new JsonArray([.. plan.HeldIn.Select(t => (JsonNode)t.Text)]),
             ["covariance"] = plan.Covariance,

@@ -2,7 +2,6 @@ using ModelLab.Projects.Entries;
 using ModelLab.Projects.Modelling;
 using ModelLab.Projects.People;
 using ModelLab.Projects.Revisions;
-using ModelLab.Projects.Storage;
 using ModelLab.Statistics.Designs;
 using ModelLab.Statistics.Selection;
 
@@ -14,7 +13,7 @@ namespace ModelLab.Projects.Paths;
 public sealed record ChosenByRule(IReadOnlyList<RevisionReading> Revisions, string Ending);
 
 /// <summary>Runs the path's rule to its end: one term at a time, a refit and a revision a step, all recorded together.</summary>
-public sealed class ChooseByRule(ProjectGate gate, IProjectStore store, AnalysisDataLoader loader, PathDesk desk, RevisionReader reader)
+public sealed class ChooseByRule(ProjectGate gate, AnalysisDataLoader loader, PathDesk desk, RevisionReader reader)
 {
     /// <summary>Runs it.</summary>
     /// <exception cref="RefusedException">The path has no rule, or went on meanwhile; nothing was stored.</exception>
@@ -23,19 +22,11 @@ public sealed class ChooseByRule(ProjectGate gate, IProjectStore store, Analysis
     {
         var admission = await gate.EnterAsync(caller, projectId, Role.Analyst, cancellation);
         var reason = preview && string.IsNullOrWhiteSpace(request.Reason) ? "preview" : Reasons.Require(request.Reason);
-        await store.ReadAsync(
-            projectId,
-            m =>
-            {
-                PathDesk.RequireAfter(m, pathId, request.After);
-                return true;
-            },
-            cancellation);
-        var standing = await desk.StandingAsync(projectId, pathId, cancellation);
+        var standing = await desk.StandingAsync(projectId, pathId, request.After, cancellation);
         var record = standing.Path.Plan.Rule
             ?? throw RefusedException.Invalid("This path has no choosing rule: people decide each step. Start a path or side path with a rule.", "rule");
         var data = await loader.LoadAsync(projectId, standing.Path.Plan, standing.Preparation, cancellation);
-        var chosen = await Task.Run(() => Run(standing, data, new ChoosingRule(record.Criterion, record.RemoveAbove), reason, cancellation), cancellation);
+        var chosen = await Task.Run(() => Run(standing, data, record.ToRule(), reason, cancellation), cancellation);
         if (!preview && chosen.Revisions.Count > 0)
         {
             await gate.RecordAsync(
@@ -65,9 +56,9 @@ public sealed class ChooseByRule(ProjectGate gate, IProjectStore store, Analysis
         {
             cancellation.ThrowIfCancellationRequested();
             var choice = BackwardElimination.Choose(results, rule);
-            if (!choice.Remove || (standing.Terms.Count == 1 && !standing.Path.Plan.Intercept))
+            if (!choice.Remove)
             {
-                return new Chain(formed, choice.Remove ? "One term is left, and a model without intercept needs one." : choice.Explanation);
+                return new Chain(formed, choice.Explanation);
             }
 
             var term = choice.Weakest!.Term;

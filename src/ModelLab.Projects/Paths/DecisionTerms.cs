@@ -20,7 +20,7 @@ public static class DecisionTerms
             throw RefusedException.Invalid($"{term} is held in on this path. Start a side path without holding it in, if the team wants to see the model without it.", "term");
         }
 
-        var needing = standing.Terms.OfType<PowerTerm>().Where(p => !p.Equals(term) && IsLowerPart(term, p)).Select(p => p.Text).ToList();
+        var needing = standing.Terms.Where(t => Marginality.IsNeededBy(term, t)).Select(t => t.Text).ToList();
         if (needing.Count > 0)
         {
             throw RefusedException.Invalid($"{term} stays while {string.Join(", ", needing)} is in the model (marginality). Remove the highest power first.", "term");
@@ -67,11 +67,4 @@ public static class DecisionTerms
 
         return int.MaxValue;
     }
-
-    private static bool IsLowerPart(Term term, PowerTerm power) => term switch
-    {
-        VariableTerm variable => variable.Variable == power.Variable,
-        PowerTerm lower => lower.Variable == power.Variable && lower.Degree < power.Degree,
-        _ => false,
-    };
 }

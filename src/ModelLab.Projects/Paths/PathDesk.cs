@@ -30,14 +30,19 @@ public sealed record FormedRevision(RevisionMade Body, FittedRevision Fitted, IR
 public sealed class PathDesk(ProjectGate gate, IProjectStore store)
 {
     /// <summary>Reads where a path stands.</summary>
-    /// <exception cref="RefusedException">There is no such path.</exception>
-    public async Task<PathStanding> StandingAsync(string projectId, string pathId, CancellationToken cancellation)
+    /// <param name="projectId">The project.</param>
+    /// <param name="pathId">The path.</param>
+    /// <param name="after">Id of the last revision that the caller has seen.</param>
+    /// <param name="cancellation">Stops the work.</param>
+    /// <exception cref="RefusedException">There is no such path, or it went on after that revision.</exception>
+    public async Task<PathStanding> StandingAsync(string projectId, string pathId, string? after, CancellationToken cancellation)
     {
         var state = await store.ReadAsync(
             projectId,
             m =>
             {
-                var path = m.Find<PathView>(pathId) ?? throw RefusedException.NotFound("such path");
+                RequireAfter(m, pathId, after);
+                var path = m.Find<PathView>(pathId)!;
                 var last = m.Find<RevisionView>(path.LastRevisionId!)!;
                 var preparation = last.PreparationId is null ? null : m.Find<PreparationView>(last.PreparationId);
                 return new State(path, last.EntryNumber, preparation, FindingsReview.OnPath(m, pathId));
@@ -59,7 +64,7 @@ public sealed class PathDesk(ProjectGate gate, IProjectStore store)
         var fitted = RevisionFitter.Fit(data, plan, terms, known);
         var body = new RevisionMade(
             gate.NewId(), standing.Path.Id, (standing.Last?.Number ?? 0) + 1, decision, terms, data.Preparation?.Id,
-            data.Facts, fitted.Figures, fitted.FullModelMeanSquare, fitted.Fingerprint, RevisionFitter.Methods);
+            data.Facts, fitted.Figures, fitted.FullModelMeanSquare, fitted.Fingerprint, [.. RevisionFitter.Methods, .. FindingRules.Versions]);
         var found = FindingRules.Look(new RevisionEvidence(body.RevisionId, terms, fitted.Figures, data.Dictionary));
         var review = FindingsReview.Acts(standing.Findings, found, gate.NewId);
         var path = standing.Path with { LastRevisionId = body.RevisionId, Revisions = body.Number };

@@ -1,6 +1,3 @@
-using ModelLab.Intake;
-using ModelLab.Intake.Csv;
-using ModelLab.Projects.Datasets;
 using ModelLab.Projects.Entries;
 using ModelLab.Statistics.Designs;
 using ModelLab.Statistics.Selection;
@@ -10,9 +7,6 @@ namespace ModelLab.Projects.Paths;
 /// <summary>Checks what a path is asked to be, before any model is fitted.</summary>
 public static class PathPlans
 {
-    /// <summary>A whole-numbered outcome that begins at 0 or 1 and has at most this many distinct values is questioned as a count (common practice).</summary>
-    public const int CountDistinct = 20;
-
     /// <summary>Checks candidates, terms held in, rule, level and covariance.</summary>
     /// <exception cref="RefusedException">Says what is wrong.</exception>
     public static void Check(PathPlan plan)
@@ -22,11 +16,8 @@ public static class PathPlans
             throw RefusedException.Invalid("Name at least one candidate term.", "terms");
         }
 
-        var twice = plan.Candidates.GroupBy(t => t.Text, StringComparer.Ordinal).FirstOrDefault(g => g.Count() > 1);
-        if (twice is not null)
-        {
-            throw RefusedException.Invalid($"The term {twice.Key} is named twice.", "terms");
-        }
+        RequireDistinct(plan.Candidates, "terms");
+        RequireDistinct(plan.HeldIn, "heldIn");
 
         if (plan.Candidates.FirstOrDefault(t => t.Variables.Contains(plan.Outcome, StringComparer.Ordinal)) is { } circular)
         {
@@ -65,33 +56,18 @@ public static class PathPlans
         }
     }
 
-    /// <summary>A binary or count outcome is questioned and needs a reason.</summary>
-    public static void QuestionOutcome(PathPlan plan, DataDictionary dictionary, SourceContents contents)
+    private static void RequireDistinct(IReadOnlyList<Term> terms, string field)
     {
-        if (dictionary.Find(plan.Outcome) is not { } variable || plan.OutcomeReason is not null)
+        if (terms.Contains(null!))
         {
-            return;
+            throw RefusedException.Invalid("A term is empty: {\"variable\":\"x\"} names one.", field);
         }
 
-        if (variable.Kind == VariableKind.Binary || variable.Distinct == 2)
+        if (terms.GroupBy(t => t.Text, StringComparer.Ordinal).FirstOrDefault(g => g.Count() > 1) is { } twice)
         {
-            throw RefusedException.Invalid(
-                $"'{plan.Outcome}' has two values. Least squares then gives differences in proportions: fitted values can leave the range, and spread is uneven by nature. "
-                + "Logistic regression is the usual method and is not offered here. If you want least squares all the same, say why in 'outcomeReason'.",
-                "outcomeReason");
-        }
-
-        if (IsCountLike(contents.Of(plan.Outcome)))
-        {
-            throw RefusedException.Invalid(
-                $"'{plan.Outcome}' looks like a count or a score: whole numbers from {contents.Of(plan.Outcome).Minimum:0} with {variable.Distinct} distinct values. "
-                + "Least squares can predict impossible values and its spread is likely to grow with the mean; count or ordinal regression is the usual method and is not offered here. "
-                + "If you want least squares all the same, say why in 'outcomeReason'.",
-                "outcomeReason");
+            throw RefusedException.Invalid($"The term {twice.Key} is named twice.", field);
         }
     }
-
-    private static bool IsCountLike(ColumnProfile column) => column is { Numeric: true, Whole: true, Minimum: 0 or 1, DistinctCapped: false, Distinct: <= CountDistinct };
 
     private static IEnumerable<Term> LowerParts(PowerTerm power)
     {

@@ -6,7 +6,6 @@ using ModelLab.Projects.People;
 using ModelLab.Projects.Preparations;
 using ModelLab.Projects.Storage;
 using ModelLab.Projects.Views;
-using ModelLab.Statistics.Inference;
 using ModelLab.Statistics.Selection;
 
 namespace ModelLab.Projects.Paths;
@@ -32,18 +31,19 @@ public sealed class RunPathAgain(ProjectGate gate, IProjectStore store, ISourceV
         var run = new Run(projectId, old, []);
         if (old.Path.Plan.PreparationId is { } preparationId)
         {
-            await CarryPreparationAsync(run, preparationId, cancellation);
+            await HoldsAsync("The preparation at the start", () => CarryPreparationAsync(run, preparationId, cancellation));
             plan = plan with { PreparationId = run.Preparation!.Id };
         }
 
         PathPlans.Check(plan);
-        PathPlans.QuestionOutcome(plan, old.Dictionary, await SourceContents.OpenAsync(vault, projectId, old.Dictionary.Dataset, cancellation));
         var path = new PathView(gate.NewId(), name, plan, null, pathId, reason, gate.Clock.GetUtcNow(), admission.Author, null, 0);
         run.Acts.Add(new Act(new PathStarted(path.Id, name, plan, null, pathId), reason));
         run.Standing = new PathStanding(path, null, run.Preparation, []);
+        run.Data = await loader.LoadAsync(projectId, plan, run.Preparation, run.Labels, cancellation);
+        OutcomeQuestion.Ask(plan, run.Data);
         foreach (var revision in old.Revisions)
         {
-            await StepAsync(run, revision, cancellation);
+            await HoldsAsync(Describe(revision), () => StepAsync(run, revision, cancellation));
         }
 
         await gate.RecordAsync(admission, run.Acts, model => StartPath.RequireFreeName(model, name), cancellation, [.. run.Contents.DistinctBy(c => c.Hash)]);
@@ -52,100 +52,76 @@ public sealed class RunPathAgain(ProjectGate gate, IProjectStore store, ISourceV
 
     private async Task StepAsync(Run run, RevisionView revision, CancellationToken cancellation)
     {
-        var standing = run.Standing!;
+        if (revision.Decision.Kind is DecisionKind.ExcludeRows or DecisionKind.RestoreRows)
+        {
+            await CarryPreparationAsync(run, revision.PreparationId!, cancellation);
+        }
+
+        run.Data ??= await loader.LoadAsync(run.ProjectId, run.Standing!.Path.Plan, run.Preparation, run.Labels, cancellation);
+        var standing = run.Standing! with { Preparation = run.Preparation };
+        var formed = await Task.Run(() => desk.Form(standing, run.Data, Decision(run, revision.Decision), revision.Terms), cancellation);
+        run.Acts.AddRange(formed.Acts);
+        run.Contents.Add(run.Data.RowsContent);
+        run.RevisionIds[revision.Id] = formed.Body.RevisionId;
+        run.Standing = formed.After;
+        run.Last = formed.Fitted;
+    }
+
+    private static async Task HoldsAsync(string what, Func<Task> act)
+    {
         try
         {
-            if (revision.Decision.Kind is DecisionKind.ExcludeRows or DecisionKind.RestoreRows)
-            {
-                await CarryPreparationAsync(run, revision.PreparationId!, cancellation);
-            }
-
-            run.Data ??= await loader.LoadAsync(run.ProjectId, standing.Path.Plan, run.Preparation, run.Labels, cancellation);
-            var formed = await Task.Run(() => desk.Form(standing with { Preparation = run.Preparation }, run.Data, Decision(run, revision), revision.Terms), cancellation);
-            run.Acts.AddRange(formed.Acts);
-            run.Contents.Add(run.Data.RowsContent);
-            run.RevisionIds[revision.Id] = formed.Body.RevisionId;
-            run.Standing = formed.After;
-            run.Results = formed.Fitted.Results;
+            await act();
         }
         catch (RefusedException refused)
         {
-            throw new RefusedException(
-                refused.Kind,
-                $"The decision of revision {revision.Number} ({JsonNamingPolicy.CamelCase.ConvertName(revision.Decision.Kind.ToString())}{(revision.Decision.Term is { } term ? $" {term}" : string.Empty)}) no longer holds on the corrected data: {refused.Message} Nothing was stored.",
-                refused.Details);
+            throw new RefusedException(refused.Kind, $"{what} no longer holds on the corrected data: {refused.Message} Nothing was stored.", refused.Details);
         }
     }
 
-    private static DecisionRecord Decision(Run run, RevisionView revision)
-    {
-        var decision = revision.Decision;
-        var rule = decision.ByRule ? Rule(run) : null;
-        return decision with
-        {
-            // The old rule's decision is carried over all the same; that the rule took it is said only where it would take it on these data too.
-            ByRule = rule is { Remove: true } && decision.Term!.Equals(rule.Weakest?.Term),
-            Evidence = decision.Kind == DecisionKind.Remove ? DecisionTerms.Evidence(run.Standing!.Last!.Figures, decision.Term!) : null,
-            FromRevisionId = decision.FromRevisionId is { } from ? run.RevisionIds.GetValueOrDefault(from) : null,
-            RuleSays = rule?.Explanation,
-        };
-    }
+    private static string Describe(RevisionView revision) =>
+        $"The decision of revision {revision.Number} ({JsonNamingPolicy.CamelCase.ConvertName(revision.Decision.Kind.ToString())}{(revision.Decision.Term is { } term ? $" {term}" : string.Empty)})";
 
-    /// <summary>What the path's rule says of the model before a step, on the data on which the path runs now.</summary>
-    private static EliminationChoice Rule(Run run)
+    /// <summary>
+    /// The old decision with the evidence of the new data. What the rule had decided is repeated by a person; it counts as the rule's
+    /// only where the rule decides the same here.
+    /// </summary>
+    private static DecisionRecord Decision(Run run, DecisionRecord old)
     {
-        var rule = run.Standing!.Path.Plan.Rule!;
-        return BackwardElimination.Choose(run.Results!, new ChoosingRule(rule.Criterion, rule.RemoveAbove));
+        var removes = old.Kind == DecisionKind.Remove;
+        var says = removes && old.ByRule ? BackwardElimination.Choose(run.Last!.Results, run.Standing!.Path.Plan.Rule!.ToRule()) : null;
+        return old with
+        {
+            ByRule = says is { Remove: true } && says.Weakest!.Term.Equals(old.Term),
+            Evidence = removes ? DecisionTerms.Evidence(run.Standing!.Last!.Figures, old.Term!) : null,
+            FromRevisionId = old.FromRevisionId is { } from ? run.RevisionIds.GetValueOrDefault(from) : null,
+            RuleSays = says?.Explanation,
+        };
     }
 
     /// <summary>Makes the preparation of an old revision once more on the new dataset, categories taken by name.</summary>
     private async Task CarryPreparationAsync(Run run, string preparationId, CancellationToken cancellation)
     {
-        if (run.PreparationIds.TryGetValue(preparationId, out var known) && known == run.Preparation?.Id)
-        {
-            return;
-        }
-
-        var old = await store.ReadAsync(run.ProjectId, m => OldPreparation.Read(m, preparationId), cancellation);
-        RequireSameRows(old, run.Old.Dictionary.Dataset);
-        var labels = await CategoryLabels.OpenAsync(vault, run.ProjectId, old.Preparation, cancellation);
-        var contents = await SourceContents.OpenAsync(vault, run.ProjectId, old.Dictionary.Dataset, cancellation);
-        var steps = old.Preparation.Steps.Select(s => Again(s, labels, old.Dictionary, contents)).ToList();
+        var old = await store.ReadAsync(run.ProjectId, m => m.Find<PreparationView>(preparationId)!, cancellation);
+        RequireSameRows(old, run.Old.RowsBefore, run.Old.Dictionary.Dataset.Rows);
+        var steps = await RepeatedSteps.OfAsync(store, vault, run.ProjectId, old, run.Old.Dictionary, cancellation);
         var built = await preparations.BuildAsync(run.ProjectId, run.Old.Dictionary.Dataset.Id, run.Old.Dictionary.Entry, null, steps, cancellation);
-        run.Acts.Add(built.Act(old.Preparation.Steps[^1].Reason));
+        run.Acts.Add(built.Act(old.Steps[^1].Reason));
         run.Preparation = built.AsView(gate.Clock.GetUtcNow());
-        run.PreparationIds[preparationId] = run.Preparation.Id;
         run.Labels = built.Labels;
         run.Data = null;
     }
 
     /// <summary>Rows are left out by number. Where rows came or went, a number may name another row, which must not be left out in silence.</summary>
-    private static void RequireSameRows(OldPreparation old, DatasetView corrected)
+    private static void RequireSameRows(PreparationView old, long before, long now)
     {
-        var before = old.Dictionary.Dataset.Rows;
-        if (before != corrected.Rows && old.Preparation.Steps.Any(s => s.Kind is StepKind.ExcludeRows or StepKind.RestoreRows))
+        if (before != now && old.Steps.Any(s => s.Kind is StepKind.ExcludeRows or StepKind.RestoreRows))
         {
             throw RefusedException.Invalid(
-                $"The path leaves out rows by their numbers, and the corrected file has {corrected.Rows} rows where the earlier one had {before}: a number may name another row now. "
+                $"The path leaves out rows by their numbers, and the corrected file has {now} rows where the earlier one had {before}: a number may name another row now. "
                 + "Start a new path on the corrected dataset and leave the rows out there.",
                 "datasetId");
         }
-    }
-
-    private static StepRequest Again(PreparationStep step, CategoryLabels labels, DataDictionary dictionary, SourceContents contents)
-    {
-        if (step.Kind != StepKind.Collapse)
-        {
-            return new StepRequest(step.Kind, step.Reason, step.Rows, step.Cause, Variables: step.Variables);
-        }
-
-        var variable = dictionary.Require(step.Variable!).Name;
-        var categories = contents.Categories(variable);
-        var names = labels.Of(step.Id);
-        return new StepRequest(
-            step.Kind, step.Reason, Variable: variable, NewVariable: step.NewVariable,
-            Groups: [.. step.Groups!.Select((g, i) => new GroupRequest(names[i], [.. g.Select(c => categories[c])]))],
-            Reference: names[step.Reference ?? 0]);
     }
 
     private static OldPath Read(IReadModel model, string pathId, string? datasetId)
@@ -159,19 +135,10 @@ public sealed class RunPathAgain(ProjectGate gate, IProjectStore store, ISourceV
                 : model.Find<DatasetView>(earlier.PreviousDatasetId)!;
         }
 
-        return new OldPath(path, DataDictionary.At(model, dataset), [.. model.All<RevisionView>().Where(r => r.PathId == pathId).OrderBy(r => r.Number)]);
+        return new OldPath(path, model.Find<DatasetView>(path.Plan.DatasetId)!.Rows, DataDictionary.At(model, dataset), [.. model.All<RevisionView>().Where(r => r.PathId == pathId).OrderBy(r => r.Number)]);
     }
 
-    private sealed record OldPath(PathView Path, DataDictionary Dictionary, IReadOnlyList<RevisionView> Revisions);
-
-    private sealed record OldPreparation(PreparationView Preparation, DataDictionary Dictionary)
-    {
-        public static OldPreparation Read(IReadModel model, string id)
-        {
-            var preparation = model.Find<PreparationView>(id)!;
-            return new OldPreparation(preparation, DataDictionary.At(model, model.Find<DatasetView>(preparation.DatasetId)!, preparation.DictionaryEntry));
-        }
-    }
+    private sealed record OldPath(PathView Path, long RowsBefore, DataDictionary Dictionary, IReadOnlyList<RevisionView> Revisions);
 
     private sealed record Run(string ProjectId, OldPath Old, List<Act> Acts)
     {
@@ -179,16 +146,14 @@ public sealed class RunPathAgain(ProjectGate gate, IProjectStore store, ISourceV
 
         public Dictionary<string, string> RevisionIds { get; } = new(StringComparer.Ordinal);
 
-        public Dictionary<string, string> PreparationIds { get; } = new(StringComparer.Ordinal);
-
         public PathStanding? Standing { get; set; }
-
-        public ModelResults? Results { get; set; }
 
         public PreparationView? Preparation { get; set; }
 
         public CategoryLabels? Labels { get; set; }
 
         public AnalysisData? Data { get; set; }
+
+        public FittedRevision? Last { get; set; }
     }
 }

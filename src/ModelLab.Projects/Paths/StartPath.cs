@@ -9,7 +9,7 @@ using ModelLab.Statistics.Designs;
 namespace ModelLab.Projects.Paths;
 
 /// <summary>Starts a path with its first revision: all candidates, or the terms of the revision that a side path leaves.</summary>
-public sealed class StartPath(ProjectGate gate, IProjectStore store, ISourceVault vault, AnalysisDataLoader loader, PathDesk desk)
+public sealed class StartPath(ProjectGate gate, IProjectStore store, AnalysisDataLoader loader, PathDesk desk)
 {
     /// <summary>Starts it and returns its id.</summary>
     /// <exception cref="RefusedException">The plan does not hold, or the model cannot be fitted; nothing was stored.</exception>
@@ -20,12 +20,12 @@ public sealed class StartPath(ProjectGate gate, IProjectStore store, ISourceVaul
         var name = Reasons.Name(request.Name, "name");
         var start = await store.ReadAsync(projectId, m => Read(m, request), cancellation);
         PathPlans.Check(start.Plan);
-        PathPlans.QuestionOutcome(start.Plan, start.Dictionary, await SourceContents.OpenAsync(vault, projectId, start.Dictionary.Dataset, cancellation));
         var data = await loader.LoadAsync(projectId, start.Plan, start.Preparation, cancellation);
+        OutcomeQuestion.Ask(start.Plan, data);
         var path = new PathView(
             gate.NewId(), name, start.Plan, request.FromRevisionId, null, reason, gate.Clock.GetUtcNow(), admission.Author, null, 0);
         var decision = new DecisionRecord(DecisionKind.Start, reason, FromRevisionId: request.FromRevisionId);
-        var formed = desk.Form(new PathStanding(path, null, start.Preparation, []), data, decision, start.Terms);
+        var formed = await Task.Run(() => desk.Form(new PathStanding(path, null, start.Preparation, []), data, decision, start.Terms), cancellation);
         await gate.RecordAsync(
             admission,
             [new Act(new PathStarted(path.Id, name, start.Plan, request.FromRevisionId, null), reason), .. formed.Acts],
@@ -64,21 +64,28 @@ public sealed class StartPath(ProjectGate gate, IProjectStore store, ISourceVaul
 
         // A side path keeps its parent's dictionary: same data, another choice. A new path takes the dictionary as it stands.
         var dictionary = DataDictionary.At(model, dataset, parent?.DictionaryEntry);
+        var outcome = request.Outcome ?? parent?.Outcome ?? throw RefusedException.Invalid("Name the outcome.", "outcome");
         var plan = new PathPlan(
             datasetId,
             dictionary.Entry,
             preparationId,
-            request.Outcome ?? parent?.Outcome ?? throw RefusedException.Invalid("Name the outcome.", "outcome"),
+            outcome,
             request.Terms ?? parent?.Candidates ?? throw RefusedException.Invalid("Name the candidate terms.", "terms"),
             request.HeldIn ?? parent?.HeldIn ?? [],
             request.Intercept ?? parent?.Intercept ?? true,
             request.Rule ?? parent?.Rule,
             request.Covariance ?? parent?.Covariance ?? "classical",
             request.Confidence ?? parent?.Confidence ?? 0.95,
-            string.IsNullOrWhiteSpace(request.OutcomeReason) ? parent?.OutcomeReason : Reasons.Text(request.OutcomeReason, "outcomeReason", string.Empty));
+            OutcomeReason(request, outcome, parent));
         IReadOnlyList<Term> terms = from is null || request.Terms is not null ? plan.Candidates : from.Terms;
-        return new Start(plan, dictionary, preparation, terms);
+        return new Start(plan, preparation, terms);
     }
 
-    private sealed record Start(PathPlan Plan, DataDictionary Dictionary, PreparationView? Preparation, IReadOnlyList<Term> Terms);
+    // The reason for one outcome says nothing about another.
+    private static string? OutcomeReason(StartRequest request, string outcome, PathPlan? parent) =>
+        !string.IsNullOrWhiteSpace(request.OutcomeReason) ? Reasons.Text(request.OutcomeReason, "outcomeReason", string.Empty)
+        : parent is not null && outcome == parent.Outcome ? parent.OutcomeReason
+        : null;
+
+    private sealed record Start(PathPlan Plan, PreparationView? Preparation, IReadOnlyList<Term> Terms);
 }

@@ -26,15 +26,7 @@ public sealed class TakeDecision(
     {
         var admission = await gate.EnterAsync(caller, projectId, Role.Analyst, cancellation);
         var reason = preview && string.IsNullOrWhiteSpace(request.Reason) ? "preview" : Reasons.Require(request.Reason);
-        await store.ReadAsync(
-            projectId,
-            m =>
-            {
-                PathDesk.RequireAfter(m, pathId, request.After);
-                return true;
-            },
-            cancellation);
-        var standing = await desk.StandingAsync(projectId, pathId, cancellation);
+        var standing = await desk.StandingAsync(projectId, pathId, request.After, cancellation);
         var taken = request.Kind switch
         {
             DecisionKind.Remove => await WithTermsAsync(projectId, standing, Removal(standing, RequireTerm(request), reason), DecisionTerms.Without(standing, RequireTerm(request)), cancellation),
@@ -80,13 +72,17 @@ public sealed class TakeDecision(
 
     private async Task<Formed> WithRowsAsync(string projectId, PathStanding standing, DecisionRequest request, string reason, CancellationToken cancellation)
     {
-        var excludes = request.Kind == DecisionKind.ExcludeRows;
-        var step = new StepRequest(excludes ? StepKind.ExcludeRows : StepKind.RestoreRows, reason, request.Rows, request.Cause);
+        var step = request.Kind == DecisionKind.ExcludeRows
+            ? new StepRequest(StepKind.ExcludeRows, reason, request.Rows, request.Cause)
+            : new StepRequest(StepKind.RestoreRows, reason, request.Rows);
         var plan = standing.Path.Plan;
-        var built = await preparations.BuildAsync(projectId, plan.DatasetId, plan.DictionaryEntry, standing.Preparation, [step], cancellation);
+
+        // Earlier steps keep the dictionary under which they were taken: the rows named here are all that changes.
+        var built = await preparations.BuildAsync(
+            projectId, plan.DatasetId, standing.Preparation?.DictionaryEntry ?? plan.DictionaryEntry, standing.Preparation, [step], cancellation);
         var made = built.AsView(gate.Clock.GetUtcNow());
         var data = await loader.LoadAsync(projectId, plan, made, built.Labels, cancellation);
-        var decision = new DecisionRecord(request.Kind!.Value, reason, Rows: built.Body.Steps[^1].Rows, Cause: request.Cause);
+        var decision = new DecisionRecord(request.Kind!.Value, reason, Rows: built.Body.Steps[^1].Rows, Cause: built.Body.Steps[^1].Cause);
         var formed = await Task.Run(() => desk.Form(standing with { Preparation = made }, data, decision, standing.Terms), cancellation);
         return new Formed(formed, [built.Act(reason), .. formed.Acts], data.RowsContent, built.Labels);
     }

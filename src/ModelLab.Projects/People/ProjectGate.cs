@@ -38,12 +38,7 @@ public sealed class ProjectGate(IProjectStore store, IPeople people, TimeProvide
     /// <exception cref="RefusedException">The account is gone or disabled, or the token may only read.</exception>
     public async Task<Person> PersonAsync(Caller caller, bool writes, CancellationToken cancellation)
     {
-        var person = await people.FindAsync(caller.PersonId, cancellation);
-        if (person is not { Active: true })
-        {
-            throw new RefusedException(RefusalKind.Forbidden, "This account is disabled. Ask an administrator of the server.");
-        }
-
+        var person = RequireActive(await people.FindAsync(caller.PersonId, cancellation));
         return writes && !caller.MayWrite
             ? throw new RefusedException(RefusalKind.Forbidden, "This token may only read. Use one of write scope.")
             : person;
@@ -61,13 +56,15 @@ public sealed class ProjectGate(IProjectStore store, IPeople people, TimeProvide
     }
 
     /// <summary>Records acts: together or not at all. The guard sees the state right before them and may refuse.</summary>
-    public Task<AppendedBatch> RecordAsync(
+    /// <remarks>A fit may take long: an account that was disabled meanwhile records nothing more.</remarks>
+    public async Task<AppendedBatch> RecordAsync(
         Admission admission, IReadOnlyList<Act> acts, Action<IReadModel>? guard, CancellationToken cancellation,
         IReadOnlyList<KeptContent>? contents = null, IReadOnlyList<string>? adopted = null)
     {
+        RequireActive(await people.FindAsync(admission.Person.Id, cancellation));
         var at = clock.GetUtcNow();
         var drafts = acts.Select(a => EntryKinds.Draft(a.Body, at, admission.Author, a.Reason, Seal(a))).ToList();
-        return store.CommitAsync(
+        return await store.CommitAsync(
             new EntryBatch(
                 admission.ProjectId,
                 drafts,
@@ -80,6 +77,10 @@ public sealed class ProjectGate(IProjectStore store, IPeople people, TimeProvide
                 adopted),
             cancellation);
     }
+
+    private static Person RequireActive(Person? person) => person is { Active: true }
+        ? person
+        : throw new RefusedException(RefusalKind.Forbidden, "This account is disabled. Ask an administrator of the server.");
 
     private static SealedContent? Seal(Act act) =>
         act.SealedContent is null ? null : new SealedContent(act.SealedUnder!, RandomNumberGenerator.GetBytes(32), act.SealedContent);

@@ -8,11 +8,18 @@ namespace ModelLab.Projects.Preparations;
 /// <summary>The rows that a preparation leaves.</summary>
 public static class KeptRows
 {
+    /// <summary>All zero-based rows of a source.</summary>
+    /// <exception cref="RefusedException">There are more than fit into memory.</exception>
+    public static int[] All(SourceView source) =>
+        source.Rows <= Array.MaxLength
+            ? [.. Enumerable.Range(0, (int)source.Rows)]
+            : throw RefusedException.Invalid($"The source has {source.Rows} rows; at most {Array.MaxLength} can be analysed together. Split the file.");
+
     /// <summary>Zero-based rows left after all steps, ascending; all rows without a preparation.</summary>
     public static async Task<int[]> ApplyAsync(
         DatasetColumns columns, string projectId, SourceView source, PreparationView? preparation, DataDictionary? dictionary, CancellationToken cancellation)
     {
-        var kept = Enumerable.Range(0, checked((int)source.Rows)).ToArray();
+        var kept = All(source);
         foreach (var step in preparation?.Steps ?? [])
         {
             kept = await ApplyAsync(columns, projectId, source, step, dictionary!, kept, cancellation);

@@ -7,14 +7,14 @@ namespace ModelLab.Projects.Replaying;
 /// <summary>The figures of a revision that a replay compares.</summary>
 public sealed record ComparedFigures(RevisionFigures Figures, double? FullModelMeanSquare);
 
-/// <summary>Compares figures one by one.</summary>
+/// <summary>Compares what is recorded with what is computed again, figure by figure.</summary>
 public static class FigureComparison
 {
     /// <summary>
-    /// The largest |a − b| / max(|a|, |b|) over all numbers, 0 where all bits agree; null where names, counts or missing values differ.
+    /// The largest |a − b| / max(|a|, |b|) over all numbers, 0 where all bits agree; null where names, texts, counts or missing values differ.
     /// Comparing the written form compares every figure, those of later versions too.
     /// </summary>
-    public static double? LargestRelativeDifference(ComparedFigures a, ComparedFigures b) =>
+    public static double? LargestRelativeDifference<T>(T a, T b) =>
         Compare(JsonSerializer.SerializeToNode(a, ProjectJson.Options), JsonSerializer.SerializeToNode(b, ProjectJson.Options));
 
     private static double? Compare(JsonNode? a, JsonNode? b)

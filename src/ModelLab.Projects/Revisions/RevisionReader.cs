@@ -42,14 +42,14 @@ public sealed class RevisionReader(IProjectStore store, ISourceVault vault)
             entry is null ? null : body.RevisionId, body.Number, body.PathId, entry?.Hash, entry?.Number,
             Decision(body.Decision, entry), plan.Outcome, plan.Intercept, plan.Confidence, figures.Fit.N, body.Terms,
             [.. figures.Terms.Select(t => new TermReading(
-                t.Term, t.Df, t.F, t.P, t.PartialRSquared, t.Vif, t.SumOfSquares, t.Removable, plan.HeldIn.Any(h => h.Text == t.Term), names.Reference(byText[t.Term])))],
+                t.Term, t.Df, t.F, t.P, t.PartialRSquared, t.Vif, t.SumOfSquares, t.Removable, plan.HeldIn.Any(h => h.Text == t.Term), t.Reference is { } reference ? names.Category(byText[t.Term], reference) : null))],
             [.. figures.Coefficients.Select(c => new CoefficientReading(
                 c.Term, c.Category is { } index ? names.Category(byText[c.Term], index) : null, c.Estimate, c.Lower, c.Upper, c.P, c.StandardError, c.T,
                 c.Standardized, c.PartialR, c.SemiPartialR, c.Vif))],
             figures.Losses,
-            figures.Losses.Where(l => l.P is not null).MaxBy(l => l.P)?.Term,
+            figures.Losses.Where(l => l.P is not null).Reverse().MaxBy(l => l.P)?.Term, // of equal ones the last, as the rule takes it
             figures.Fit, [], figures.Tied, state.Findings, body.PreparationId, body.Rows,
-            RevisionNotices.For(plan, body, [.. state.Earlier, body.Decision]), body.Fingerprint, body.Methods);
+            [.. names.Replaced(figures.Terms, byText), .. RevisionNotices.For(plan, body, [.. state.Earlier, body.Decision])], body.Fingerprint, body.Methods);
     }
 
     private static DecisionReading Decision(DecisionRecord d, LedgerEntry? entry) =>
@@ -85,7 +85,14 @@ public sealed class RevisionReader(IProjectStore store, ISourceVault vault)
                 yield return revision.Decision;
             }
 
-            var from = path.FromRevisionId is null ? null : model.Find<RevisionView>(path.FromRevisionId);
+            RevisionView? from = null;
+
+            // A path run again repeats what was chosen before the path that it runs again.
+            for (var first = path; from is null && first is not null; first = first.AgainOfPathId is null ? null : model.Find<PathView>(first.AgainOfPathId))
+            {
+                from = first.FromRevisionId is null ? null : model.Find<RevisionView>(first.FromRevisionId);
+            }
+
             path = from is null ? null : model.Find<PathView>(from.PathId);
             before = (from?.Number ?? 0) + 1;
         }
@@ -103,22 +110,15 @@ public sealed class RevisionReader(IProjectStore store, ISourceVault vault)
             return derived.Makes(name) ? derived.Categories(name)[index] : contents.Categories(name)[index];
         }
 
-        public string? Reference(Term term)
+        /// <summary>What to say where the dictionary's reference category has no row among those analysed.</summary>
+        public IEnumerable<string> Replaced(IReadOnlyList<RevisionTerm> terms, Dictionary<string, Term> byText) =>
+            terms.Where(t => t.Reference is { } reference && reference != Wanted(byText[t.Term]))
+                .Select(t => $"The reference category of {t.Term} has no row among those analysed: its coefficients are read against {Category(byText[t.Term], t.Reference!.Value)}.");
+
+        private int? Wanted(Term term)
         {
             var name = term.Variables[0];
-            if (derived.Makes(name))
-            {
-                return derived.Categories(name)[derived.Reference(name)];
-            }
-
-            var variable = dictionary.Require(name);
-            if (Modelling.DatasetColumns.EntersAsNumber(variable, contents))
-            {
-                return null;
-            }
-
-            var categories = contents.Categories(name);
-            return variable.ReferenceCategory is { } index ? categories[index] : categories.First(c => !variable.MissingCodes.Contains(c, StringComparer.Ordinal));
+            return derived.Makes(name) ? derived.Reference(name) : contents.Reference(dictionary.Require(name));
         }
     }
 }

@@ -40,6 +40,8 @@ public sealed class ReceiveSource(ProjectGate gate, IProjectStore store, ISource
         var admission = await gate.EnterAsync(caller, projectId, Role.Analyst, cancellation);
         var known = completed is null ? await CheckAsync(projectId, request, cancellation) : null;
         var sourceId = gate.NewId();
+        var datasetId = gate.NewId();
+        TableProfile profile;
         try
         {
             var stored = await vault.StoreAsync(projectId, sourceId, content, cancellation);
@@ -49,7 +51,7 @@ public sealed class ReceiveSource(ProjectGate gate, IProjectStore store, ISource
             }
 
             known ??= await CheckAsync(projectId, request, cancellation);
-            var profile = await Task.Run(() => CsvTable.Profile(() => vault.Open(projectId, sourceId), request.Options, cancellation), cancellation);
+            profile = await Task.Run(() => CsvTable.Profile(() => vault.Open(projectId, sourceId), request.Options, cancellation), cancellation);
             if (!request.IdentifiersChecked)
             {
                 QuestionIdentifiers(profile);
@@ -57,7 +59,6 @@ public sealed class ReceiveSource(ProjectGate gate, IProjectStore store, ISource
 
             var source = new SourceView(sourceId, stored.Sha256, stored.Bytes, profile.Rows, profile.Dialect, default, admission.Author, 0);
             var variables = await StatesAsync(projectId, source, profile, known.Previous, cancellation);
-            var datasetId = gate.NewId();
             await gate.RecordAsync(
                 admission,
                 [
@@ -71,25 +72,27 @@ public sealed class ReceiveSource(ProjectGate gate, IProjectStore store, ISource
                 null,
                 cancellation,
                 adopted: [sourceId]);
-            return await store.ReadAsync(
-                projectId,
-                m =>
-                {
-                    var dataset = m.Find<DatasetView>(datasetId)!;
-                    return new ReceivedSource(m.Find<SourceView>(sourceId)!, dataset, profile, DataDictionary.At(m, dataset).Variables);
-                },
-                cancellation);
         }
         catch
         {
             await vault.DiscardAsync(projectId, sourceId, CancellationToken.None);
             throw;
         }
+
+        // From here on the source is the project's: whatever fails now, it stays.
+        return await store.ReadAsync(
+            projectId,
+            m =>
+            {
+                var dataset = m.Find<DatasetView>(datasetId)!;
+                return new ReceivedSource(m.Find<SourceView>(sourceId)!, dataset, profile, DataDictionary.At(m, dataset).Variables);
+            },
+            cancellation);
     }
 
     private async Task<Known> CheckAsync(string projectId, SourceRequest request, CancellationToken cancellation) => new(
         Reasons.Name(Path.GetFileName(request.FileName?.Replace('\\', '/')), "fileName"),
-        request.PreviousDatasetId is null ? null : Reasons.Require(request.Reason),
+        request.PreviousDatasetId is null && string.IsNullOrWhiteSpace(request.Reason) ? null : Reasons.Require(request.Reason),
         request.PreviousDatasetId is null ? null : await PreviousAsync(projectId, request.PreviousDatasetId, cancellation));
 
     private static void QuestionIdentifiers(TableProfile profile)
@@ -119,14 +122,42 @@ public sealed class ReceiveSource(ProjectGate gate, IProjectStore store, ISource
         var carried = new List<VariableState>();
         foreach (var state in proposed)
         {
-            var old = previous.Dictionary.Find(state.Name)!;
-            var reference = old.ReferenceCategory is { } index ? previous.Contents.Categories(old.Name)[index] : null;
-            var change = new VariableChange(old.Label, old.Unit, old.Kind, old.MissingCodes, reference, old.Note, null);
-            var after = await states.ApplyAsync(projectId, source, contents, state with { Id = old.VariableId }, change, cancellation);
-            carried.Add(after with { Confirmed = old.Confirmed });
+            carried.Add(await CarriedAsync(projectId, source, contents, state, previous, cancellation));
         }
 
         return carried;
+    }
+
+    /// <summary>
+    /// The description of a variable, carried over from the dataset that the file corrects: what people said holds, and the file is
+    /// refused where it cannot. What nobody confirmed is proposed anew where it does not fit.
+    /// </summary>
+    private async Task<VariableState> CarriedAsync(
+        string projectId, SourceView source, SourceContents contents, VariableState proposed, Previous previous, CancellationToken cancellation)
+    {
+        var old = previous.Dictionary.Find(proposed.Name)!;
+        var reference = old.ReferenceCategory is { } index ? previous.Contents.Categories(old.Name)[index] : null;
+
+        // Texts such as NA that the earlier file did not hold are taken as missing as in any new file.
+        var codes = old.MissingCodes.Union(proposed.MissingCodes.Except(previous.Contents.Of(old.Name).MissingCodes, StringComparer.Ordinal), StringComparer.Ordinal).ToList();
+        var change = new VariableChange(old.Label, old.Unit, old.Kind, codes, reference, old.Note, null);
+        var before = proposed with { Id = old.VariableId };
+        try
+        {
+            var after = await states.ApplyAsync(projectId, source, contents, before, change, cancellation);
+            return after with { Confirmed = old.Confirmed };
+        }
+        catch (RefusedException) when (!old.Confirmed)
+        {
+            return before;
+        }
+        catch (RefusedException refused)
+        {
+            throw new RefusedException(
+                refused.Kind,
+                $"The description of '{old.Name}' does not fit the corrected file. {refused.Message} Correct the file, or change the description in the dataset that it corrects, then send it again. Nothing was stored.",
+                refused.Details);
+        }
     }
 
     private static void RequireSameColumns(TableProfile profile, DataDictionary before)
