@@ -19,6 +19,15 @@ public sealed class MemoryStore : IProjectStore, ISourceVault, IPeople
 
     public int SourcesHeld => sources.Count;
 
+    /// <summary>Sources that were to be discarded.</summary>
+    public List<string> Discarded { get; } = [];
+
+    /// <summary>Run before a batch is committed, as somebody faster would.</summary>
+    public Action? BeforeCommit { get; set; }
+
+    /// <summary>Run after a batch was committed.</summary>
+    public Action? AfterCommit { get; set; }
+
     public void Add(Person person) => people[person.Id] = person;
 
     /// <summary>Puts other bytes in the place of a source, as someone with the disk in hand could.</summary>
@@ -26,6 +35,15 @@ public sealed class MemoryStore : IProjectStore, ISourceVault, IPeople
 
     /// <summary>Puts other bytes in the place of an entry.</summary>
     public void ReplaceEntry(string ledgerId, long number, byte[] bytes) => ledgers[ledgerId].Entries[(int)number - 1] = bytes;
+
+    /// <summary>Puts another head in the place of the stored one.</summary>
+    public void ReplaceHead(string ledgerId, LedgerHead head) => ledgers[ledgerId].Head = head;
+
+    /// <summary>Puts other bytes in the place of kept content.</summary>
+    public void ReplaceContent(string ledgerId, Sha256Hash hash, byte[] bytes) => ledgers[ledgerId].Contents[hash.ToString()] = bytes;
+
+    /// <summary>The sealed part of an entry, to be altered in place.</summary>
+    public JsonObject SealedPart(string ledgerId, long number) => ledgers[ledgerId].Sealed[number];
 
     public MemoryReadModel Model(string projectId) => ledgers[projectId].Model;
 
@@ -44,6 +62,16 @@ public sealed class MemoryStore : IProjectStore, ISourceVault, IPeople
     }
 
     public Task<AppendedBatch> CommitAsync(EntryBatch batch, CancellationToken cancellation)
+    {
+        var (before, after) = (BeforeCommit, AfterCommit);
+        BeforeCommit = AfterCommit = null;
+        before?.Invoke();
+        var appended = Commit(batch);
+        after?.Invoke();
+        return Task.FromResult(appended);
+    }
+
+    private AppendedBatch Commit(EntryBatch batch)
     {
         lock (gate)
         {
@@ -67,7 +95,7 @@ public sealed class MemoryStore : IProjectStore, ISourceVault, IPeople
 
             kept.Head = appended.Head;
             ledgers[batch.LedgerId] = kept;
-            return Task.FromResult(appended);
+            return appended;
         }
     }
 
@@ -98,6 +126,7 @@ public sealed class MemoryStore : IProjectStore, ISourceVault, IPeople
 
     public Task DiscardAsync(string projectId, string sourceId, CancellationToken cancellation)
     {
+        Discarded.Add(sourceId);
         sources.TryRemove(sourceId, out _);
         return Task.CompletedTask;
     }
