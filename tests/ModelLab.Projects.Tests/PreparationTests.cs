@@ -5,7 +5,6 @@ using ModelLab.Projects.Paths;
 using ModelLab.Projects.Preparations;
 using ModelLab.Projects.Replaying;
 using ModelLab.Projects.Tests.Hosting;
-using ModelLab.Statistics.Selection;
 
 namespace ModelLab.Projects.Tests;
 
@@ -155,31 +154,8 @@ public sealed class PreparationTests : IDisposable
         var before = bench.Store.Entries(project).Count;
         var refused = await RefusedAsync(() => AgainAsync(project, path.Path.Id, "shorter", shorter.Dataset.Id));
         Assert.Contains("revision 2", refused.Message, StringComparison.Ordinal);
-        Assert.Contains("no row 31", refused.Message, StringComparison.Ordinal);
+        Assert.Contains("30 rows where the earlier one had 31", refused.Message, StringComparison.Ordinal);
         Assert.Equal(before, bench.Store.Entries(project).Count);
-    }
-
-    [Fact]
-    public async Task The_rules_removal_repeated_on_other_data_is_the_rules_only_where_it_decides_the_same()
-    {
-        var (project, dataset) = await ProjectAsync();
-        var path = await bench.PathAsync(project, Bench.Start(dataset, "saved", "area", "age") with { Rule = new RuleRecord(ChoosingDirection.Backward, Criterion.P, 0.05) });
-        var chosen = await bench.Get<ChooseByRule>().ExecuteAsync(Bench.Analyst, project, path.Path.Id, new ChooseRequest("the rule", path.Revisions[0].Id), false, Bench.Stop);
-        Assert.NotEmpty(chosen.Revisions);
-        Assert.All(chosen.Revisions, r => Assert.True(r.Decision.ByRule));
-
-        // Now the term that left first decides everything.
-        var first = chosen.Revisions[0].Decision.Term!;
-        var column = first == "area" ? 1 : 2;
-        var lines = Table.TrimEnd('\n').Split('\n');
-        var strong = lines.Select((l, i) => i == 0 ? l : $"{(10 * double.Parse(l.Split(',')[column], System.Globalization.CultureInfo.InvariantCulture)) + (i % 2) + 0.5:0.00},{l[(l.IndexOf(',', StringComparison.Ordinal) + 1)..]}");
-        var other = await bench.SourceAsync(project, string.Join('\n', strong) + "\n", previousDatasetId: dataset);
-        var again = await AgainAsync(project, path.Path.Id, "again", other.Dataset.Id);
-        Assert.Equal(first, again.Revisions[1].Decision.Term);
-        Assert.False(again.Revisions[1].Decision.ByRule);
-        Assert.Contains("0.05", again.Revisions[1].Decision.RuleSays, StringComparison.Ordinal);
-        Assert.True(again.Revisions[1].Decision.Evidence!.P < 1e-6);
-        Assert.True((await ReplayAsync(project)).Ok);
     }
 
     private static async Task<RefusedException> RefusedAsync(Func<Task> act)
