@@ -3,6 +3,7 @@ using ModelLab.Store.Server;
 using ModelLab.Store.Sqlite;
 using ModelLab.Store.Sqlite.Starting;
 using ModelLab.Web.Features.Demo;
+using ModelLab.Web.Settings;
 
 namespace ModelLab.Web.Startup;
 
@@ -54,18 +55,18 @@ public sealed partial class StartupWork(
     private async Task FirstStartAsync(CancellationToken cancellation)
     {
         var records = services.GetRequiredService<ServerRecords>();
-        if ((await records.PeopleAsync(cancellation)).Count > 0)
+        var unfinished = Path.Combine(services.GetRequiredService<StorageSettings>().DataFolder, "demo-unfinished");
+        var empty = (await records.PeopleAsync(cancellation)).Count == 0;
+        if (environment.IsDevelopment() && services.GetService<IDemoLoader>() is { } demo && (empty || File.Exists(unfinished)))
         {
-            return;
-        }
-
-        if (environment.IsDevelopment() && services.GetService<IDemoLoader>() is { } demo)
-        {
+            // The mark outlives a start that is broken off, so that the next one makes the demo after all; what was half made stays beside it.
             readiness.Now("making the demo project");
+            await File.WriteAllBytesAsync(unfinished, [], cancellation);
             await demo.LoadAsync(cancellation);
+            File.Delete(unfinished);
             LogDemo();
         }
-        else if (await records.CreateSetUpTokenAsync(cancellation) is { } token)
+        else if (empty && await records.CreateSetUpTokenAsync(cancellation) is { } token)
         {
             // To the console and not to the log, which may be kept somewhere that more people read.
             await Console.Out.WriteLineAsync($"First set-up: nobody has an account yet. The set-up token, which works once and until the next start: {token}");

@@ -21,8 +21,10 @@ public sealed record DemoPeople(Person Analyst, Person Supervisor, Person Evalua
     /// <summary>Gives the three an account. None has a password: nobody can sign in as one of them from elsewhere.</summary>
     public static async Task<DemoPeople> EnrolAsync(ServerRecords records, CancellationToken cancellation)
     {
+        // A start that was broken off may have left some of them.
+        var known = await records.PeopleAsync(cancellation);
         async Task<Person> Enrol(string name, string email, bool administrator) =>
-            (await records.EnrolAsync(ServerRecords.CommandLineActor, name, email, administrator, cancellation)).Person;
+            known.FirstOrDefault(p => p.Email == email) ?? (await records.EnrolAsync(ServerRecords.CommandLineActor, name, email, administrator, cancellation)).Person;
 
         return new DemoPeople(
             await Enrol("Ines Halloway", AnalystEmail, administrator: false),
