@@ -159,6 +159,19 @@ public sealed class DictionaryTests : IDisposable
     }
 
     [Fact]
+    public async Task A_variable_that_is_no_category_any_more_has_no_reference_and_its_file_can_be_corrected()
+    {
+        var project = await bench.ProjectAsync();
+        var coded = Heated().Replace(",gas\n", ",1\n", StringComparison.Ordinal).Replace(",oil\n", ",2\n", StringComparison.Ordinal).Replace(",wood\n", ",3\n", StringComparison.Ordinal);
+        var first = await bench.SourceAsync(project, coded);
+        await DescribeAsync(project, first.Dataset.Id, "heat", kind: VariableKind.Categorical, reference: "2");
+        await DescribeAsync(project, first.Dataset.Id, "heat", kind: VariableKind.Continuous);
+        Assert.Null((await VariableAsync(project, first.Dataset.Id, "heat")).Variable.ReferenceCategory);
+        var corrected = await bench.SourceAsync(project, coded.Replace(",5.25,", ",6.25,", StringComparison.Ordinal), previousDatasetId: first.Dataset.Id);
+        Assert.Equal(VariableKind.Continuous, corrected.Variables.Single(v => v.Name == "heat").Kind);
+    }
+
+    [Fact]
     public async Task A_source_that_was_taken_up_is_not_discarded_when_the_answer_fails()
     {
         var project = await bench.ProjectAsync();

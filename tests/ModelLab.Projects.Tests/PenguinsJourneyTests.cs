@@ -2,9 +2,11 @@ using ModelLab.Intake;
 using ModelLab.Projects.Datasets;
 using ModelLab.Projects.Entries;
 using ModelLab.Projects.Paths;
+using ModelLab.Projects.Preparations;
 using ModelLab.Projects.Records;
 using ModelLab.Projects.Replaying;
 using ModelLab.Projects.Tests.Hosting;
+using ModelLab.Statistics.Designs;
 using ModelLab.Statistics.Selection;
 
 namespace ModelLab.Projects.Tests;
@@ -68,16 +70,31 @@ public sealed class PenguinsJourneyTests : IDisposable
     }
 
     [Fact]
-    public async Task No_cell_of_the_file_stands_open_in_the_ledger()
+    public async Task No_cell_of_the_file_stands_open_in_the_ledger_or_in_the_read_model()
     {
         var project = await bench.ProjectAsync();
         var source = await bench.SourceAsync(project, Bench.Fixture("penguins.csv"), fileName: "penguins-of-the-palmer-station.csv");
         await bench.Get<DescribeVariable>().ExecuteAsync(
             Bench.Analyst, project, source.Dataset.Id, "island", new VariableChange(null, null, VariableKind.Categorical, null, "Dream", null, "most rows"), Bench.Stop);
-        var path = await bench.PathAsync(project, Bench.Start(source.Dataset.Id, "body_mass_g", Candidates));
+        var made = await bench.Get<MakePreparation>().ExecuteAsync(
+            Bench.Analyst, project,
+            new PreparationRequest(source.Dataset.Id, null, [new StepRequest(
+                StepKind.Collapse, "the large one", Variable: "species", NewVariable: "large", Groups: [new GroupRequest("Gentoo", ["Gentoo"]), new GroupRequest("small", ["Adelie", "Chinstrap"])])]),
+            false, Bench.Stop);
+        var path = await bench.PathAsync(project, Bench.Start(source.Dataset.Id, "body_mass_g", Candidates) with
+        {
+            Terms = [.. Candidates.Where(c => c != "species").Append("large").Select(c => new VariableTerm(c))],
+            PreparationId = made.Preparation.Id,
+            Rule = new RuleRecord(ChoosingDirection.Backward, Criterion.P, 1e-9),
+        });
         Assert.Equal("Dream", path.Revisions[0].Terms.Single(t => t.Term == "island").Reference);
+        Assert.Equal("Gentoo", path.Revisions[0].Terms.Single(t => t.Term == "large").Reference);
+        await bench.Get<ChooseByRule>().ExecuteAsync(Bench.Analyst, project, path.Path.Id, new ChooseRequest("to the end", path.Revisions[0].Id), false, Bench.Stop);
+        var corrected = await bench.SourceAsync(project, Bench.Fixture("penguins.csv"), source.Dataset.Id, "palmer-station-2.csv");
+        await bench.Get<RunPathAgain>().ExecuteAsync(Bench.Analyst, project, path.Path.Id, new AgainRequest("again", corrected.Dataset.Id, "sent again"), Bench.Stop);
 
-        var open = string.Concat(bench.Store.Entries(project).Select(System.Text.Encoding.UTF8.GetString));
+        var open = string.Concat(bench.Store.Entries(project).Select(System.Text.Encoding.UTF8.GetString))
+            + string.Concat(bench.Store.Model(project).Collections.SelectMany(c => c.Value.Select(v => System.Text.Json.JsonSerializer.Serialize(v, c.Key, ProjectJson.Options))));
         foreach (var secret in new[] { "Adelie", "Chinstrap", "Gentoo", "Biscoe", "Dream", "Torgersen", "FEMALE", "palmer-station" })
         {
             Assert.DoesNotContain(secret, open, StringComparison.Ordinal);

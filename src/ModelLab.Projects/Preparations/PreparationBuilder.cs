@@ -1,4 +1,3 @@
-using ModelLab.Intake;
 using ModelLab.Ledger.Entries;
 using ModelLab.Projects.Datasets;
 using ModelLab.Projects.Entries;
@@ -107,7 +106,7 @@ public sealed class PreparationBuilder(ProjectGate gate, IProjectStore store, IS
     private Task<Work> CollapseAsync(Work work, string id, string reason, StepRequest request, CancellationToken cancellation)
     {
         var variable = work.Dictionary.Require(request.Variable ?? throw RefusedException.Invalid("Name the variable whose categories are put together.", "variable"));
-        if (variable.Kind is not (VariableKind.Categorical or VariableKind.Ordered or VariableKind.Binary))
+        if (!VariableStates.HasCategories(variable.Kind))
         {
             throw RefusedException.Invalid($"'{variable.Name}' is not categorical. Describe it as categorical first; a measured variable is not cut into groups here.", "variable");
         }

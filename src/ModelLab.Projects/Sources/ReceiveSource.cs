@@ -136,7 +136,7 @@ public sealed class ReceiveSource(ProjectGate gate, IProjectStore store, ISource
         string projectId, SourceView source, SourceContents contents, VariableState proposed, Previous previous, CancellationToken cancellation)
     {
         var old = previous.Dictionary.Find(proposed.Name)!;
-        var reference = old.ReferenceCategory is { } index ? previous.Contents.Categories(old.Name)[index] : null;
+        var reference = old.ReferenceCategory is { } index && VariableStates.HasCategories(old.Kind) ? previous.Contents.Categories(old.Name)[index] : null;
 
         // Texts such as NA that the earlier file did not hold are taken as missing as in any new file.
         var codes = old.MissingCodes.Union(proposed.MissingCodes.Except(previous.Contents.Of(old.Name).MissingCodes, StringComparer.Ordinal), StringComparer.Ordinal).ToList();

@@ -92,6 +92,15 @@ public sealed class ReadTests
     }
 
     [Fact]
+    public void Numbers_that_stand_for_categories_are_taken_without_spaces_and_texts_with_them()
+    {
+        var column = (CategoryColumn)Read("a,b\n 1,1\n1 ,1\n a,1\na,1\n", Comma, new ColumnRequest("a", false, [])).Columns[0];
+
+        Assert.Equal([" a", "1", "a"], column.Categories);
+        Assert.Equal([1, 1, 0, 2], column.Codes.ToArray());
+    }
+
+    [Fact]
     public void Listed_categories_keep_their_order_and_others_are_refused()
     {
         var request = new ColumnRequest("a", false, [], ["low", "high", "never met"], "high");
