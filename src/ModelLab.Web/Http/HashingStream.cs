@@ -4,7 +4,7 @@ using System.Text;
 namespace ModelLab.Web.Http;
 
 /// <summary>A part of an upload on its way through: hashed, counted, and refused above a limit.</summary>
-internal sealed class HashingStream(Stream inner, string name, long maximumBytes) : Stream
+internal sealed class HashingStream(Stream inner, string name, string? fileName, long maximumBytes) : Stream
 {
     private readonly IncrementalHash hash = IncrementalHash.CreateHash(HashAlgorithmName.SHA256);
     private long count;
@@ -23,8 +23,8 @@ internal sealed class HashingStream(Stream inner, string name, long maximumBytes
         set => throw new NotSupportedException();
     }
 
-    /// <summary>The part's line in the hash of the whole body.</summary>
-    public string Finish() => $"{Convert.ToHexStringLower(SHA256.HashData(Encoding.UTF8.GetBytes(name)))} {Convert.ToHexStringLower(hash.GetHashAndReset())}";
+    /// <summary>The part's line in the hash of the whole body; the name of the file counts, for it is recorded with the file.</summary>
+    public string Finish() => $"{Convert.ToHexStringLower(SHA256.HashData(Encoding.UTF8.GetBytes(fileName is null ? name : $"{name}\n{fileName}")))} {Convert.ToHexStringLower(hash.GetHashAndReset())}";
 
     public override int Read(byte[] buffer, int offset, int count) => Read(buffer.AsSpan(offset, count));
 

@@ -6,6 +6,7 @@ using Microsoft.AspNetCore.DataProtection;
 using ModelLab.Ledger;
 using ModelLab.Store.Requests;
 using ModelLab.Web.Features.Tokens;
+using ModelLab.Web.Settings;
 
 namespace ModelLab.Web.Http;
 
@@ -14,7 +15,7 @@ namespace ModelLab.Web.Http;
 /// when method, path, query and body are; of a multipart body, whose boundaries differ from one sending to the next, when the names
 /// and contents of its parts are. Keys belong to a person. What is kept of an answer is encrypted, for an answer may hold a secret.
 /// </summary>
-public sealed class IdempotencyGate(RequestDelegate next, IdempotencyRecords records, IDataProtectionProvider protection)
+public sealed class IdempotencyGate(RequestDelegate next, IdempotencyRecords records, IDataProtectionProvider protection, StorageSettings storage)
 {
     /// <summary>The header that carries the key.</summary>
     public const string KeyHeader = "Idempotency-Key";
@@ -45,7 +46,12 @@ public sealed class IdempotencyGate(RequestDelegate next, IdempotencyRecords rec
         }
 
         var person = context.User.PersonId();
-        var request = await FingerprintAsync(context);
+        if (await FingerprintAsync(context) is not { } request)
+        {
+            await Problems.WriteAsync(context, ProblemTranslation.TooLarge(context, storage.MaximumRequestBytes));
+            return;
+        }
+
         var turn = $"{person} {key}";
         if (!running.TryAdd(turn, true))
         {
@@ -154,16 +160,27 @@ public sealed class IdempotencyGate(RequestDelegate next, IdempotencyRecords rec
             ? $"The request with this {KeyHeader} is being carried out. Ask again in a moment for its answer."
             : $"The request with this {KeyHeader} was begun, and its answer is not known. Look whether its act stands in the ledger; if not, send it with a new key.");
 
-    private static async Task<Sha256Hash> FingerprintAsync(HttpContext context)
+    /// <summary>The hash of a request, or null where a body that is no upload is larger than such bodies may be.</summary>
+    private async Task<Sha256Hash?> FingerprintAsync(HttpContext context)
     {
         var request = context.Request;
         using var hash = IncrementalHash.CreateHash(HashAlgorithmName.SHA256);
         hash.AppendData(Encoding.UTF8.GetBytes($"{request.Method}\n{request.Path}\n{request.QueryString}\n"));
         if (!UploadReader.IsUpload(request))
         {
-            // Within the limit of bodies that are no uploads.
+            // Held in memory, so the limit is kept here too: the endpoint of uploads has raised the server's own for itself.
             var body = new MemoryStream();
-            await request.Body.CopyToAsync(body, context.RequestAborted);
+            var buffer = new byte[1 << 16];
+            for (int read; (read = await request.Body.ReadAsync(buffer, context.RequestAborted)) > 0;)
+            {
+                if (body.Length + read > storage.MaximumRequestBytes)
+                {
+                    return null;
+                }
+
+                body.Write(buffer, 0, read);
+            }
+
             hash.AppendData(body.GetBuffer().AsSpan(0, (int)body.Length));
             body.Position = 0;
             request.Body = body;

@@ -104,7 +104,7 @@ public sealed class UploadReader : IDisposable
 
         var name = HeaderUtilities.RemoveQuotes(disposition.Name).ToString();
         var fileName = disposition.FileNameStar.HasValue ? disposition.FileNameStar : HeaderUtilities.RemoveQuotes(disposition.FileName);
-        current = new HashingStream(section.Body, name, maximumBytes);
+        current = new HashingStream(section.Body, name, fileName.HasValue ? fileName.ToString() : null, maximumBytes);
         return new UploadPart(name, fileName.HasValue ? LastSegment(fileName.ToString()) : null, current);
     }
 

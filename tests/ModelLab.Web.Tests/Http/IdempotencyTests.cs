@@ -3,6 +3,7 @@ using System.Text;
 using Microsoft.EntityFrameworkCore;
 using Microsoft.Extensions.DependencyInjection;
 using ModelLab.Store;
+using ModelLab.Web.Settings;
 using ModelLab.Web.Tests.Hosting;
 using Xunit;
 
@@ -106,5 +107,34 @@ public sealed class IdempotencyTests(SharedServer shared)
         Assert.DoesNotContain(issued.Text("secret"), Encoding.Latin1.GetString(row.Body), StringComparison.Ordinal);
         var again = await shared.Client.PostJsonAsync("/api/v1/tokens", Request, "key-8").JsonAsync(HttpStatusCode.Created);
         Assert.Equal(issued.Text("secret"), again.Text("secret"));
+    }
+
+    [Theory]
+    [InlineData(null)]
+    [InlineData("application/json")]
+    public async Task A_body_that_is_no_upload_is_not_held_beyond_its_limit(string? type)
+    {
+        var project = await shared.Client.OpenProjectAsync();
+        using var body = new ByteArrayContent(new byte[shared.Server.Services.GetRequiredService<StorageSettings>().MaximumRequestBytes + 1]);
+        body.Headers.ContentType = type is null ? null : new(type);
+        using var request = new HttpRequestMessage(HttpMethod.Post, type is null ? $"/api/v1/projects/{project}/sources" : "/api/v1/projects") { Content = body };
+        request.Headers.Add("Idempotency-Key", $"key-9-{type?.Length}");
+        Assert.Equal("tooLarge", (await shared.Client.SendAsync(request, TestContext.Current.CancellationToken).ProblemAsync(HttpStatusCode.RequestEntityTooLarge)).Text("kind"));
+    }
+
+    [Fact]
+    public async Task A_file_of_another_name_is_another_request()
+    {
+        var project = await shared.Client.OpenProjectAsync();
+        async Task<HttpResponseMessage> SendAsync(string fileName)
+        {
+            using var form = new MultipartFormDataContent { { new ByteArrayContent("plot,yield\n1,2.5\n2,3.5\n3,4.5\n"u8.ToArray()), "file", fileName } };
+            using var request = new HttpRequestMessage(HttpMethod.Post, $"/api/v1/projects/{project}/sources") { Content = form };
+            request.Headers.Add("Idempotency-Key", "key-10");
+            return await shared.Client.SendAsync(request, TestContext.Current.CancellationToken);
+        }
+
+        await SendAsync("first.csv").JsonAsync(HttpStatusCode.Created);
+        Assert.Equal("keyReused", (await SendAsync("second.csv").ProblemAsync(HttpStatusCode.UnprocessableEntity)).Text("kind"));
     }
 }
