@@ -21,7 +21,7 @@ public static class ProjectJson
         options.DefaultIgnoreCondition = nulls;
         options.NumberHandling = JsonNumberHandling.Strict;
         options.Encoder = System.Text.Encodings.Web.JavaScriptEncoder.UnsafeRelaxedJsonEscaping;
-        options.Converters.Add(new JsonStringEnumConverter(JsonNamingPolicy.CamelCase, allowIntegerValues: false));
+        options.Converters.Add(new EnumWordConverter());
         options.Converters.Add(new TermJsonConverter());
         options.Converters.Add(new Sha256HashJsonConverter());
     }

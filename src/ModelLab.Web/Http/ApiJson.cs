@@ -25,7 +25,7 @@ public static class ApiJson
         options.UnmappedMemberHandling = JsonUnmappedMemberHandling.Disallow;
         options.AllowDuplicateProperties = false;
         options.RespectNullableAnnotations = true;
-        options.TypeInfoResolver = new DefaultJsonTypeInfoResolver { Modifiers = { RequireWhatMayNotBeNull } };
+        options.TypeInfoResolver = new DefaultJsonTypeInfoResolver { Modifiers = { RequireWhatMayNotBeNull, RefuseNullsInLists } };
         options.MaxDepth = MaximumDepth;
     }
 
@@ -37,6 +37,32 @@ public static class ApiJson
             property.IsRequired = true;
         }
     }
+
+    /// <summary>No list of a request has places for nothing; the reader itself checks members alone.</summary>
+    private static void RefuseNullsInLists(JsonTypeInfo type)
+    {
+        var lists = type.Properties
+            .Where(p => p is { AssociatedParameter: not null, Get: not null } && IsListOfReferences(p.PropertyType))
+            .ToList();
+        if (type.Kind != JsonTypeInfoKind.Object || lists.Count == 0)
+        {
+            return;
+        }
+
+        type.OnDeserialized = value =>
+        {
+            foreach (var list in lists)
+            {
+                if (list.Get!(value) is IEnumerable<object?> elements && elements.Contains(null))
+                {
+                    throw new JsonException($"The list '{list.Name}' holds null; leave it out or put a value there.");
+                }
+            }
+        };
+    }
+
+    private static bool IsListOfReferences(Type type) =>
+        type.IsGenericType && type.GetGenericTypeDefinition() == typeof(IReadOnlyList<>) && !type.GetGenericArguments()[0].IsValueType;
 
     private static JsonSerializerOptions Make()
     {

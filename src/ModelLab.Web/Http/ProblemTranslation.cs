@@ -2,6 +2,7 @@ using System.Text.Json;
 using System.Text.RegularExpressions;
 using Microsoft.AspNetCore.Http.Features;
 using Microsoft.AspNetCore.Mvc;
+using Microsoft.Net.Http.Headers;
 using ModelLab.Intake;
 using ModelLab.Projects;
 using ModelLab.Statistics.Designs;
@@ -23,6 +24,8 @@ public static partial class ProblemTranslation
         BadHttpRequestException { InnerException: JsonException json } => OfJson(context, json),
         BadHttpRequestException bad => OfRequest(context, bad),
         JsonException json => OfJson(context, json),
+        InvalidOperationException when HasUnknownCharset(context.Request) => Problems.Of(
+            context, StatusCodes.Status415UnsupportedMediaType, "mediaType", "The charset of the body's Content-Type is not known. Send UTF-8."),
         InvalidDataException data when IsUpload(context) => Problems.Of(
             context, StatusCodes.Status400BadRequest, "malformed", $"The multipart body cannot be read: {data.Message}"),
         _ => null,
@@ -86,7 +89,7 @@ public static partial class ProblemTranslation
             case StatusCodes.Status413PayloadTooLarge:
                 return TooLarge(context, context.Features.Get<IHttpMaxRequestBodySizeFeature>()?.MaxRequestBodySize);
             case StatusCodes.Status415UnsupportedMediaType:
-                return Problems.Of(context, bad.StatusCode, "mediaType", "The body has to be JSON: send it with Content-Type: application/json.");
+                return Problems.Of(context, bad.StatusCode, "mediaType", StatusProblems.MediaTypes);
         }
 
         if (Unbound().Match(bad.Message) is { Success: true } unbound)
@@ -111,6 +114,9 @@ public static partial class ProblemTranslation
     public static ProblemDetails TooLarge(HttpContext context, long? limit) => Problems.Of(
         context, StatusCodes.Status413PayloadTooLarge, "tooLarge",
         $"The body is larger than {(limit is { } bytes ? $"the {bytes} bytes" : "what is")} allowed here. Nothing was stored.");
+
+    private static bool HasUnknownCharset(HttpRequest request) =>
+        MediaTypeHeaderValue.TryParse(request.ContentType, out var type) && type is { Encoding: null, Charset.Length: > 0 };
 
     private static bool IsUpload(HttpContext context) =>
         context.Request.ContentType?.StartsWith("multipart/", StringComparison.OrdinalIgnoreCase) == true;

@@ -37,6 +37,10 @@ public sealed class HostileJsonTests(SharedServer shared)
     [InlineData("""{"terms":[{"cube":"a"}]}""", "$.terms[0]", "'cube' is no kind of term offered here")]
     [InlineData("""{"terms":[{"variable":"a","variable":"b"}]}""", "$.terms[0]", "")]
     [InlineData("""{"terms":{"variable":"a"}}""", "$.terms", "expected is a list")]
+    [InlineData("""{"terms":[{"variable":"a"},null]}""", "$", "The list 'terms' holds null")]
+    [InlineData("""{"heldIn":[null]}""", "$", "The list 'heldIn' holds null")]
+    [InlineData("""{"rule":{"direction":"Backward","criterion":"p","removeAbove":0.05}}""", "$.rule.direction", "expected is one of backward")]
+    [InlineData("""{"rule":{"direction":"backward","criterion":"p, aic"}}""", "$.rule.criterion", "expected is one of p, aic")]
     [InlineData("""{"confidence":123456789012345678901234567890e400}""", "$.confidence", "The number is too large for a double.")]
     [InlineData("""{"intercept":"yes"}""", "$.intercept", "expected is true or false")]
     public async Task A_broken_path_is_refused_with_its_place(string body, string place, string words)
@@ -44,6 +48,39 @@ public sealed class HostileJsonTests(SharedServer shared)
         var problem = await shared.Client.PostJsonAsync("/api/v1/projects/x/paths", body).ProblemAsync(HttpStatusCode.BadRequest);
         Assert.Contains(words, problem.Text("detail"), StringComparison.Ordinal);
         Assert.Equal(place, problem["errors"]![0]!.Text("column"));
+    }
+
+    [Theory]
+    [InlineData("""{"datasetId":"x","steps":[null]}""", "The list 'steps' holds null")]
+    [InlineData("""{"datasetId":"x","steps":[{"kind":"collapse","reason":"r","groups":[null]}]}""", "The list 'groups' holds null")]
+    [InlineData("""{"datasetId":"x","steps":[{"kind":"collapse","reason":"r","groups":[{"label":"a","categories":["b",null]}]}]}""", "The list 'categories' holds null")]
+    [InlineData("""{"datasetId":"x","steps":[{"kind":"completeCases","reason":"r","variables":[null]}]}""", "The list 'variables' holds null")]
+    public async Task A_list_with_nothing_at_a_place_is_refused(string body, string words)
+    {
+        var problem = await shared.Client.PostJsonAsync("/api/v1/projects/x/preparations", body).ProblemAsync(HttpStatusCode.BadRequest);
+        Assert.Contains(words, problem.Text("detail"), StringComparison.Ordinal);
+    }
+
+    [Theory]
+    [InlineData("reviewer, analyst")]
+    [InlineData("reviewer,owner")]
+    [InlineData("Owner")]
+    [InlineData("3")]
+    [InlineData(" owner")]
+    public async Task A_role_is_one_word(string role)
+    {
+        var project = await shared.Client.OpenProjectAsync();
+        var body = $$"""{"email":"{{WebServer.EmailOf("Sten Marsh")}}","role":"{{role}}","reason":"to help"}""";
+        var problem = await shared.Client.PostJsonAsync($"/api/v1/projects/{project}/people", body).ProblemAsync(HttpStatusCode.BadRequest);
+        Assert.Contains("expected is one of reader, reviewer, analyst, owner", problem.Text("detail"), StringComparison.Ordinal);
+    }
+
+    [Fact]
+    public async Task A_charset_that_is_not_known_is_refused()
+    {
+        using var body = new ByteArrayContent("{}"u8.ToArray());
+        body.Headers.TryAddWithoutValidation("Content-Type", "application/json; charset=nonsense");
+        await shared.Client.PostAsync("/api/v1/projects", body, TestContext.Current.CancellationToken).ProblemAsync(HttpStatusCode.UnsupportedMediaType);
     }
 
     [Fact]

@@ -4,6 +4,7 @@ using Microsoft.AspNetCore.Mvc;
 using Microsoft.AspNetCore.OpenApi;
 using Microsoft.OpenApi;
 using ModelLab.Ledger;
+using ModelLab.Projects.Entries;
 using ModelLab.Statistics.Designs;
 
 namespace ModelLab.Web.Features.ApiReference;
@@ -61,6 +62,8 @@ public static class ApiSchemas
     {
         _ when type == typeof(double) => new OpenApiSchema { Type = JsonSchemaType.Number, Format = "double" },
         _ when type == typeof(double?) => new OpenApiSchema { Type = JsonSchemaType.Number | JsonSchemaType.Null, Format = "double" },
+        { IsEnum: true } => Words(type, JsonSchemaType.String),
+        _ when Nullable.GetUnderlyingType(type) is { IsEnum: true } choice => Words(choice, JsonSchemaType.String | JsonSchemaType.Null),
         _ when type == typeof(Sha256Hash) => Hash(JsonSchemaType.String),
         _ when type == typeof(Sha256Hash?) => Hash(JsonSchemaType.String | JsonSchemaType.Null),
         _ when type == typeof(ProblemDetails) => Problem(),
@@ -85,6 +88,17 @@ public static class ApiSchemas
     private static OpenApiSchema Hash(JsonSchemaType type) =>
         new() { Type = type, Pattern = "^[0-9a-f]{64}$", Description = "SHA-256, 64 lower-case hexadecimal digits." };
 
+    private static OpenApiSchema Words(Type type, JsonSchemaType form)
+    {
+        var words = EnumWordConverter.WordsOf(type).Select(w => (JsonNode)w).ToList();
+        if (form.HasFlag(JsonSchemaType.Null))
+        {
+            words.Add(JsonNullSentinel.JsonNull);
+        }
+
+        return new OpenApiSchema { Type = form, Enum = words };
+    }
+
     private static OpenApiSchema Text(string? description = null) => new() { Type = JsonSchemaType.String, Description = description };
 
     private static OpenApiSchema Object(string description, Dictionary<string, IOpenApiSchema> properties) =>
@@ -96,6 +110,7 @@ public static class ApiSchemas
         schema.Type = written.Type;
         schema.Format = written.Format;
         schema.Pattern = written.Pattern;
+        schema.Enum = written.Enum;
         schema.Properties = written.Properties;
         schema.Examples = written.Examples;
         schema.Description ??= written.Description;
