@@ -27,6 +27,12 @@ public static class CsvTable
     /// <summary>Version of the reading, kept with every dataset.</summary>
     public const string MethodVersion = "csv-reading/1";
 
+    /// <summary>The delimiters that are read.</summary>
+    public static IReadOnlyList<char> Delimiters { get; } = DelimiterDetection.Candidates;
+
+    /// <summary>The decimal marks that are read.</summary>
+    public static IReadOnlyList<char> DecimalMarks { get; } = ['.', ','];
+
     /// <summary>Reads a whole file once and says what is in it, without keeping it.</summary>
     /// <param name="stream">The file, read forward only; not disposed. It need not be seekable.</param>
     /// <param name="options">What is known of it.</param>
@@ -81,7 +87,7 @@ public static class CsvTable
 
     private static void CheckDecimalMark(char? mark, string parameter)
     {
-        if (mark is { } c && c is not ('.' or ','))
+        if (mark is { } c && !DecimalMarks.Contains(c))
         {
             throw new ArgumentException($"The decimal mark is a point or a comma, not '{c}'.", parameter);
         }

@@ -56,7 +56,7 @@ public sealed class SourceForm(UploadReader upload)
     /// <exception cref="RefusedException">A field holds what it cannot hold.</exception>
     public SourceRequest ToRequest(string? fileName) => new(
         fileName,
-        new CsvOptions(Character("delimiter"), Character("decimalMark"), Field("encoding")),
+        new CsvOptions(Character("delimiter", CsvTable.Delimiters), Character("decimalMark", CsvTable.DecimalMarks), Field("encoding")),
         Field("identifiersChecked") switch
         {
             null or "false" => false,
@@ -86,11 +86,12 @@ public sealed class SourceForm(UploadReader upload)
 
     private string? Field(string name) => fields.GetValueOrDefault(name) is { Length: > 0 } text ? text : null;
 
-    private char? Character(string name) => Field(name) switch
+    private char? Character(string name, IReadOnlyList<char> offered) => Field(name) switch
     {
         null => null,
-        "\\t" or "tab" => '\t',
-        [var one] => one,
-        var other => throw RefusedException.Invalid($"{name} is one character, not '{other}'. Nothing was stored.", name),
+        "\\t" or "tab" when offered.Contains('\t') => '\t',
+        [var one] when offered.Contains(one) => one,
+        var other => throw RefusedException.Invalid(
+            $"{name} cannot be '{other}'; it is one of {string.Join(' ', offered.Select(c => c == '\t' ? "tab" : c.ToString()))}. Nothing was stored.", name),
     };
 }

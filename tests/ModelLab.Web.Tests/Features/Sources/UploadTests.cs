@@ -43,6 +43,11 @@ public sealed class UploadTests(SharedServer shared)
     [InlineData("identifiersChecked", "yes", "identifiersChecked")]
     [InlineData("colour", "red", "colour")]
     [InlineData("delimiter", "ab", "delimiter")]
+    [InlineData("delimiter", "1", "delimiter")]
+    [InlineData("delimiter", "\"", "delimiter")]
+    [InlineData("delimiter", "\0", "delimiter")]
+    [InlineData("decimalMark", "tab", "decimalMark")]
+    [InlineData("decimalMark", "x", "decimalMark")]
     [InlineData("previousDatasetId", "none", null)]
     public async Task A_field_that_cannot_be_is_refused_and_nothing_is_left(string name, string value, string? column)
     {
