@@ -17,8 +17,9 @@ public sealed partial class ProblemExceptionHandler(ILogger<ProblemExceptionHand
         var problem = ProblemTranslation.OfRefusal(httpContext, exception);
         if (problem is null)
         {
-            // The route and not the path, which may hold the secret of an invitation.
-            var route = (httpContext.GetEndpoint() as RouteEndpoint)?.RoutePattern.RawText ?? "(no endpoint)";
+            // The route and not the path, which may hold the secret of an invitation. The endpoint itself was taken off the request before this.
+            var endpoint = httpContext.Features.Get<IExceptionHandlerFeature>()?.Endpoint ?? httpContext.GetEndpoint();
+            var route = (endpoint as RouteEndpoint)?.RoutePattern.RawText ?? "(no endpoint)";
             LogFault(exception, httpContext.Request.Method, route, Problems.TraceId(httpContext));
             problem = ProblemTranslation.OfFault(httpContext, exception);
         }

@@ -33,6 +33,8 @@ public sealed record SignInResult(SignInOutcome Outcome, Account? Account = null
 /// </summary>
 public sealed partial class SignInDesk(SignInAttempts attempts, UserManager<Account> accounts, IPasswordHasher<Account> hasher, TimeProvider clock, ILogger<SignInDesk> log)
 {
+    private const int LongestEmail = 320;
+
     /// <summary>Tries a password.</summary>
     /// <exception cref="RefusedException">The account was changed at the same moment.</exception>
     public async Task<SignInResult> TryAsync(string email, string password, string address, CancellationToken cancellation)
@@ -42,8 +44,10 @@ public sealed partial class SignInDesk(SignInAttempts attempts, UserManager<Acco
             return new SignInResult(SignInOutcome.LockedOut, Until: until);
         }
 
-        if (password.Length > PasswordRules.MaximumLength)
+        // No account has such an address or password; it is neither looked up nor remembered.
+        if (password.Length > PasswordRules.MaximumLength || email.Length > LongestEmail)
         {
+            attempts.Addresses.Failed(address);
             return new SignInResult(SignInOutcome.Wrong);
         }
 

@@ -1,9 +1,12 @@
 using System.Threading.RateLimiting;
 using Microsoft.AspNetCore.Authentication.Cookies;
 using Microsoft.AspNetCore.DataProtection;
+using Microsoft.AspNetCore.DataProtection.KeyManagement;
+using Microsoft.AspNetCore.DataProtection.Repositories;
 using Microsoft.AspNetCore.Identity;
 using ModelLab.Store;
 using ModelLab.Store.Accounts;
+using ModelLab.Store.Keys;
 using ModelLab.Web.Features.Tokens;
 using ModelLab.Web.Http;
 using ModelLab.Web.Settings;
@@ -24,9 +27,8 @@ public static class SignInRegistration
     /// <summary>Registers all of it.</summary>
     public static void AddSignIn(this IServiceCollection services, ServerSettings settings)
     {
-        services.AddDataProtection()
-            .SetApplicationName("ModelLab")
-            .PersistKeysToFileSystem(new DirectoryInfo(Path.Combine(settings.Storage.KeysFolder, "sessions")));
+        services.AddDataProtection().SetApplicationName("ModelLab");
+        services.AddOptions<KeyManagementOptions>().Configure<ILoggerFactory>((o, log) => o.XmlRepository = SessionKeys(settings.Storage, log));
         services.AddIdentityCore<Account>(o =>
             {
                 // The user name is the e-mail address, whose characters are not for this library to choose.
@@ -58,5 +60,18 @@ public static class SignInRegistration
                     context.HttpContext, StatusCodes.Status429TooManyRequests, "tooMany", "There were too many attempts from your address in the last minute. Wait a minute."));
             };
         });
+    }
+
+    /// <summary>
+    /// Where the keys of sessions lie. The framework asks for them before the store has started, and would make the folders of data
+    /// and keys for all to look into: they are made here as the store makes them.
+    /// </summary>
+    private static FileSystemXmlRepository SessionKeys(StorageSettings storage, ILoggerFactory log)
+    {
+        var folder = Path.Combine(storage.KeysFolder, "sessions");
+        PrivateFiles.MakeFolder(storage.DataFolder);
+        PrivateFiles.MakeFolder(storage.KeysFolder);
+        PrivateFiles.MakeFolder(folder);
+        return new FileSystemXmlRepository(new DirectoryInfo(folder), log);
     }
 }

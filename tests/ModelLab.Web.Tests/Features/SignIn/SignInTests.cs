@@ -25,6 +25,38 @@ public sealed class SignInTests
     }
 
     [Fact]
+    public async Task The_keys_of_sessions_lie_where_nobody_else_looks()
+    {
+        if (OperatingSystem.IsWindows())
+        {
+            Assert.Skip("Windows has no such modes.");
+            return;
+        }
+
+        const UnixFileMode Owner = UnixFileMode.UserRead | UnixFileMode.UserWrite | UnixFileMode.UserExecute;
+        await using var server = await WebServer.StartAsync(s => s.Settings["KeysFolder"] = Path.Combine(s.DataFolder, "apart"));
+        await server.PersonAsync("Ada Quill");
+        await SignInAsync(server.Anonymous()).JsonAsync(HttpStatusCode.OK);
+        Assert.NotEmpty(Directory.GetFiles(Path.Combine(server.DataFolder, "apart", "sessions"), "key-*.xml"));
+        Assert.Equal(Owner, File.GetUnixFileMode(Path.Combine(server.DataFolder, "apart")));
+        Assert.Equal(Owner, File.GetUnixFileMode(Path.Combine(server.DataFolder, "apart", "sessions")));
+    }
+
+    [Fact]
+    public async Task An_address_longer_than_any_is_wrong_and_counts()
+    {
+        await using var server = await WebServer.StartAsync(s => s.Settings["SignIn:FailuresPerAddress"] = "3");
+        using var client = server.Anonymous();
+        var body = $$"""{"email":"{{new string('a', 100_000)}}","password":"{{WebServer.Password}}"}""";
+        for (var i = 0; i < 3; i++)
+        {
+            Assert.Equal("wrongPassword", (await client.PostJsonAsync("/sign-in", body).ProblemAsync(HttpStatusCode.Unauthorized)).Text("kind"));
+        }
+
+        Assert.Equal("lockedOut", (await client.PostJsonAsync("/sign-in", body).ProblemAsync(HttpStatusCode.TooManyRequests)).Text("kind"));
+    }
+
+    [Fact]
     public async Task The_cookie_is_out_of_reach_of_scripts_and_other_sites()
     {
         await using var server = await WebServer.StartAsync();
