@@ -36,10 +36,11 @@ public sealed class ManageMembers(ProjectGate gate, IProjectStore store, IPeople
     public async Task<MemberView> ChangeRoleAsync(Caller caller, string projectId, string personId, Role role, string? reason, CancellationToken cancellation)
     {
         var admission = await gate.EnterAsync(caller, projectId, Role.Owner, cancellation);
+        var disabled = await DisabledOwnersAsync(projectId, cancellation);
         await gate.RecordAsync(
             admission,
             [new Act(new MemberRoleChanged(personId, role), Reasons.Require(reason))],
-            model => RequireOwnerLeft(model, personId, role),
+            model => RequireOwnerLeft(model, personId, role, disabled),
             cancellation);
         return await MemberAsync(projectId, personId, cancellation);
     }
@@ -48,24 +49,41 @@ public sealed class ManageMembers(ProjectGate gate, IProjectStore store, IPeople
     public async Task RemoveAsync(Caller caller, string projectId, string personId, string? reason, CancellationToken cancellation)
     {
         var admission = await gate.EnterAsync(caller, projectId, Role.Owner, cancellation);
+        var disabled = await DisabledOwnersAsync(projectId, cancellation);
         await gate.RecordAsync(
             admission,
             [new Act(new MemberLeft(personId), Reasons.Require(reason))],
-            model => RequireOwnerLeft(model, personId, null),
+            model => RequireOwnerLeft(model, personId, null, disabled),
             cancellation);
     }
 
-    private static void RequireOwnerLeft(IReadModel model, string personId, Role? newRole)
+    /// <summary>Owners who can do nothing, since their accounts are disabled.</summary>
+    private async Task<IReadOnlySet<string>> DisabledOwnersAsync(string projectId, CancellationToken cancellation)
+    {
+        var owners = await store.ReadAsync(projectId, m => m.All<MemberView>().Where(x => x.Role == Role.Owner).Select(x => x.Id).ToList(), cancellation);
+        var disabled = new HashSet<string>(StringComparer.Ordinal);
+        foreach (var owner in owners)
+        {
+            if (await people.FindAsync(owner, cancellation) is not { Active: true })
+            {
+                disabled.Add(owner);
+            }
+        }
+
+        return disabled;
+    }
+
+    private static void RequireOwnerLeft(IReadModel model, string personId, Role? newRole, IReadOnlySet<string> disabled)
     {
         if (model.Find<MemberView>(personId) is not { Role: not null })
         {
             throw RefusedException.NotFound("such member");
         }
 
-        var owners = model.All<MemberView>().Where(m => m.Role == Role.Owner).Select(m => m.Id).ToList();
+        var owners = model.All<MemberView>().Where(m => m.Role == Role.Owner && !disabled.Contains(m.Id)).Select(m => m.Id).ToList();
         if (newRole != Role.Owner && owners.Count == 1 && owners[0] == personId)
         {
-            throw new RefusedException(RefusalKind.Conflict, "A project keeps at least one owner. Make another member owner first.");
+            throw new RefusedException(RefusalKind.Conflict, "A project keeps at least one owner whose account is active. Make another member owner first.");
         }
     }
 

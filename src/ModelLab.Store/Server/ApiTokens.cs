@@ -33,11 +33,7 @@ public sealed class ApiTokens(StoreWriter writer, IDbContextFactory<ModelLabCont
                 throw new RefusedException(RefusalKind.Conflict, $"{person.Name} is disabled; a token would hold for nobody.");
             }
 
-            name = name.Trim();
-            if (name.Length is 0 or > 200)
-            {
-                throw RefusedException.Invalid("A token's name says what it is for, in 1 to 200 characters.", "name");
-            }
+            name = Reasons.Name(name, "name");
 
             if (lifetime <= TimeSpan.Zero || lifetime > LongestLifetime)
             {
@@ -115,10 +111,23 @@ public sealed class ApiTokens(StoreWriter writer, IDbContextFactory<ModelLabCont
 
         if (row.LastUsedAt is null || now - row.LastUsedAt >= UseResolution)
         {
-            await writer.WriteAsync(c => c.ApiTokens.Where(t => t.Id == row.Id).ExecuteUpdateAsync(s => s.SetProperty(t => t.LastUsedAt, now)), cancellation);
+            await NoteUseAsync(row.Id, now, cancellation);
         }
 
         return new TokenHolder(account.ToPerson(), row.Id, row.Scope, row.ExpiresAt);
+    }
+
+    /// <summary>A full disk does not keep anybody from reading: when a token was last used is then not noted.</summary>
+    private async Task NoteUseAsync(string tokenId, DateTimeOffset at, CancellationToken cancellation)
+    {
+        try
+        {
+            await writer.WriteAsync(c => c.ApiTokens.Where(t => t.Id == tokenId).ExecuteUpdateAsync(s => s.SetProperty(t => t.LastUsedAt, at)), cancellation);
+        }
+        catch (StorageFailedException)
+        {
+            // The next use tries again.
+        }
     }
 
     private static ApiToken ToToken(ApiTokenRow row) =>

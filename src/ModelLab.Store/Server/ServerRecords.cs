@@ -145,6 +145,8 @@ public sealed class ServerRecords(StoreWriter writer, IDbContextFactory<ModelLab
             account.SecurityStamp = NewId();
             account.ConcurrencyStamp = NewId();
             context.Invitations.Remove(invitation);
+            await ServerLedger.RecordAsync(
+                context, "invitation-taken-up/1", time.GetUtcNow(), new Author(account.Id, account.Name), null, new JsonObject { ["personId"] = account.Id });
             return account.ToPerson();
         },
         cancellation);
@@ -167,7 +169,7 @@ public sealed class ServerRecords(StoreWriter writer, IDbContextFactory<ModelLab
                 account.SecurityStamp = NewId();
                 account.ConcurrencyStamp = NewId();
                 context.Invitations.RemoveRange(await context.Invitations.Where(i => i.PersonId == personId).ToListAsync());
-                await ServerLedger.RecordAsync(context, "person-disabled/1", time.GetUtcNow(), by, Reason(reason), new JsonObject { ["personId"] = personId });
+                await ServerLedger.RecordAsync(context, "person-disabled/1", time.GetUtcNow(), by, Reasons.Require(reason), new JsonObject { ["personId"] = personId });
             }
 
             return account.ToPerson();
@@ -185,15 +187,12 @@ public sealed class ServerRecords(StoreWriter writer, IDbContextFactory<ModelLab
             {
                 account.Active = true;
                 account.ConcurrencyStamp = NewId();
-                await ServerLedger.RecordAsync(context, "person-enabled/1", time.GetUtcNow(), by, Reason(reason), new JsonObject { ["personId"] = personId });
+                await ServerLedger.RecordAsync(context, "person-enabled/1", time.GetUtcNow(), by, Reasons.Require(reason), new JsonObject { ["personId"] = personId });
             }
 
             return account.ToPerson();
         },
         cancellation);
-
-    private static string Reason(string reason) =>
-        string.IsNullOrWhiteSpace(reason) ? throw RefusedException.Invalid("Give a reason.", "reason") : reason.Trim();
 
     private static string NewId() => Guid.NewGuid().ToString("N");
 
@@ -211,14 +210,9 @@ public sealed class ServerRecords(StoreWriter writer, IDbContextFactory<ModelLab
 
     private async Task<Account> NewAccountAsync(ModelLabContext context, string name, string email, bool administrator)
     {
-        name = name.Trim();
+        name = Reasons.Name(name, "name");
         email = email.Trim();
-        if (name.Length is 0 or > 200)
-        {
-            throw RefusedException.Invalid("A name has 1 to 200 characters.", "name");
-        }
-
-        if (email.Length is 0 or > 254 || email.Count(c => c == '@') != 1 || email[0] == '@' || email[^1] == '@' || email.Any(c => char.IsWhiteSpace(c) || char.IsControl(c)))
+        if (email.Length is 0 or > 254 || email.Count(c => c == '@') != 1 || email[0] == '@' || email[^1] == '@' || email.Any(c => char.IsWhiteSpace(c) || char.IsControl(c) || Reasons.IsInvisible(c)))
         {
             throw RefusedException.Invalid("An e-mail address has the form name@place, without blanks.", "email");
         }

@@ -1,5 +1,7 @@
 using System.Data.Common;
+using Microsoft.Data.Sqlite;
 using Microsoft.EntityFrameworkCore.Diagnostics;
+using ModelLab.Store.Server;
 using ModelLab.Store.Sqlite.Upkeep;
 using ModelLab.Store.Tests.Setting;
 using ModelLab.Store.Writing;
@@ -32,6 +34,34 @@ public sealed class FullDiskTests
         disk.Pages = 1 << 30;
         Assert.Equal(11, (await store.CommitAsync(SmallProject.Comment("big", new string('b', 1 << 20)))).Head.Count);
         Assert.Equal(noise.Length, (await store.Vault.StoreAsync("p2", "big", new MemoryStream(noise), TestStore.Cancellation)).Bytes);
+    }
+
+    [Fact]
+    public async Task A_token_reads_on_a_full_disk_too()
+    {
+        var disk = new RefusedUses();
+        await using var store = await TestStore.StartAsync(disk);
+        var person = (await store.Get<ServerRecords>().EnrolAsync(ServerRecords.CommandLineActor, "Ben", "ben@example.org", false, TestStore.Cancellation)).Person.Id;
+        var tokens = store.Get<ApiTokens>();
+        var issued = await tokens.IssueAsync(person, person, "nightly run", TokenScope.Read, TimeSpan.FromDays(1), TestStore.Cancellation);
+        disk.Full = true;
+        Assert.Equal(person, (await tokens.FindHolderAsync(issued.Secret, TestStore.Cancellation))?.Person.Id);
+        Assert.Null(Assert.Single(await tokens.OfPersonAsync(person, TestStore.Cancellation)).LastUsedAt);
+        disk.Full = false;
+        Assert.NotNull(await tokens.FindHolderAsync(issued.Secret, TestStore.Cancellation));
+        Assert.NotNull(Assert.Single(await tokens.OfPersonAsync(person, TestStore.Cancellation)).LastUsedAt);
+    }
+
+    /// <summary>Answers a change of the tokens as a full disk does.</summary>
+    private sealed class RefusedUses : DbCommandInterceptor
+    {
+        public bool Full { get; set; }
+
+        public override ValueTask<InterceptionResult<int>> NonQueryExecutingAsync(
+            DbCommand command, CommandEventData eventData, InterceptionResult<int> result, CancellationToken cancellationToken = default) =>
+            Full && command.CommandText.StartsWith("UPDATE \"api_tokens\"", StringComparison.Ordinal)
+                ? throw new SqliteException("database or disk is full", 13)
+                : ValueTask.FromResult(result);
     }
 
     /// <summary>Lets the database grow to a number of pages and then answers as a full disk does (SQLITE_FULL).</summary>

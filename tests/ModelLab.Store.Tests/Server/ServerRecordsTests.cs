@@ -41,7 +41,7 @@ public sealed class ServerRecordsTests
         await records.AcceptInvitationAsync(second.Secret, "the hash", TestStore.Cancellation);
         Assert.Equal("the hash", store.Value("SELECT PasswordHash FROM accounts"));
         await ForbiddenAsync(() => records.AcceptInvitationAsync(second.Secret, "another", TestStore.Cancellation));
-        Assert.Equal(["person-enrolled/1", "person-invited-again/1"], await KindsAsync(store));
+        Assert.Equal(["person-enrolled/1", "person-invited-again/1", "invitation-taken-up/1"], await KindsAsync(store));
     }
 
     [Fact]
@@ -119,6 +119,47 @@ public sealed class ServerRecordsTests
         await records.EnableAsync(ServerRecords.CommandLineActor, invitation.Person.Id, "Came back", TestStore.Cancellation);
         Assert.True(Assert.Single(await records.PeopleAsync(TestStore.Cancellation)).Active);
         Assert.Equal(["person-enrolled/1", "person-disabled/1", "person-enabled/1"], await KindsAsync(store));
+    }
+
+    [Theory]
+    [InlineData("Ben\nAda", "ben@example.org", "name")]
+    [InlineData("Ben\0", "ben@example.org", "name")]
+    [InlineData("\u202eneB", "ben@example.org", "name")]
+    [InlineData("\u200b", "ben@example.org", "name")]
+    [InlineData("Ben", "ben\uffff@example.org", "email")]
+    [InlineData("Ben", "ben\u200b@example.org", "email")]
+    public async Task A_name_or_address_that_shows_something_else_is_refused(string name, string email, string field)
+    {
+        await using var store = await TestStore.StartAsync();
+        var refusal = await Assert.ThrowsAsync<RefusedException>(
+            () => store.Get<ServerRecords>().EnrolAsync(ServerRecords.CommandLineActor, name, email, false, TestStore.Cancellation));
+        Assert.True(field == "email" ? refusal.Message.StartsWith("An e-mail address", StringComparison.Ordinal) : refusal.Details.Single().Column == field, refusal.Message);
+        Assert.Equal(0L, store.Value("SELECT count(*) FROM accounts"));
+    }
+
+    [Fact]
+    public async Task A_reason_is_text_of_bearable_length()
+    {
+        await using var store = await TestStore.StartAsync();
+        var records = store.Get<ServerRecords>();
+        var ben = (await records.EnrolAsync(ServerRecords.CommandLineActor, "Ben", "ben@example.org", false, TestStore.Cancellation)).Person.Id;
+        foreach (var reason in new[] { new string('r', Reasons.LongestText + 1), "\u001b[31m", "\u200b\u2060" })
+        {
+            await Assert.ThrowsAsync<RefusedException>(() => records.DisableAsync(ServerRecords.CommandLineActor, ben, reason, TestStore.Cancellation));
+        }
+
+        Assert.Equal(["person-enrolled/1"], await KindsAsync(store));
+    }
+
+    [Fact]
+    public async Task Taking_up_an_invitation_stands_in_the_ledger()
+    {
+        await using var store = await TestStore.StartAsync();
+        var records = store.Get<ServerRecords>();
+        var invitation = await records.EnrolAsync(ServerRecords.CommandLineActor, "Ben", "ben@example.org", false, TestStore.Cancellation);
+        await records.AcceptInvitationAsync(invitation.Secret, "a hash", TestStore.Cancellation);
+        var entry = await store.Projects.EntryAsync("server", 2, TestStore.Cancellation);
+        Assert.Equal(("invitation-taken-up/1", "Ben"), (entry.Kind, entry.By.Name));
     }
 
     [Fact]
