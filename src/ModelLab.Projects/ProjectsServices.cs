@@ -33,6 +33,7 @@ public static class ProjectsServices
         .AddSingleton<ReadProjects>()
         .AddSingleton<ManageMembers>()
         .AddSingleton<ReceiveSource>()
+        .AddSingleton<ReadSources>()
         .AddSingleton<ReadDataset>()
         .AddSingleton<DescribeVariable>()
         .AddSingleton<MakePreparation>()

@@ -27,6 +27,8 @@ public sealed class RoleTests : IDisposable
         ["ManageMembers.ChangeRoleAsync"] = new(Role.Owner, (b, c, p) => b.Get<ManageMembers>().ChangeRoleAsync(c, p, "reader", Role.Reader, "why", None)),
         ["ManageMembers.RemoveAsync"] = new(Role.Owner, (b, c, p) => b.Get<ManageMembers>().RemoveAsync(c, p, "nobody", "why", None)),
         ["ReceiveSource.ExecuteAsync"] = new(Role.Analyst, (b, c, p) => b.Get<ReceiveSource>().ExecuteAsync(c, p, new SourceRequest(null, new CsvOptions(), false, null, null), Stream.Null, None)),
+        ["ReadSources.AllAsync"] = new(Role.Reader, (b, c, p) => b.Get<ReadSources>().AllAsync(c, p, None)),
+        ["ReadSources.OpenAsync"] = new(Role.Reader, (b, c, p) => b.Get<ReadSources>().OpenAsync(c, p, "none", None)),
         ["ReadDataset.ExecuteAsync"] = new(Role.Reader, (b, c, p) => b.Get<ReadDataset>().ExecuteAsync(c, p, "none", None)),
         ["ReadDataset.CorrelationsAsync"] = new(Role.Reader, (b, c, p) => b.Get<ReadDataset>().CorrelationsAsync(c, p, "none", None)),
         ["DescribeVariable.ExecuteAsync"] = new(Role.Analyst, (b, c, p) => b.Get<DescribeVariable>().ExecuteAsync(c, p, "none", "x", new VariableChange(null, null, null, null, null, null, null), None)),

@@ -1,7 +1,9 @@
+using ModelLab.Projects.Datasets;
 using ModelLab.Projects.Entries;
 using ModelLab.Projects.People;
 using ModelLab.Projects.Storage;
 using ModelLab.Projects.Views;
+using ModelLab.Statistics.Designs;
 
 namespace ModelLab.Projects.Comments;
 
@@ -24,7 +26,8 @@ public sealed class ManageComments(ProjectGate gate, IProjectStore store)
             throw RefusedException.Invalid("Say what the comment is about: {\"kind\":\"revision\",\"id\":…}.", "place");
         }
 
-        return await RecordAsync(admission, place, null, text, model => RequirePlace(model, projectId, place), cancellation);
+        var exact = await store.ReadAsync(projectId, m => Exact(m, place), cancellation);
+        return await RecordAsync(admission, exact, null, text, model => RequirePlace(model, projectId, exact), cancellation);
     }
 
     /// <summary>Replies to a remark; the reply stands at the same place.</summary>
@@ -53,6 +56,17 @@ public sealed class ManageComments(ProjectGate gate, IProjectStore store)
         await gate.RecordAsync(admission, [new Act(body)], guard, cancellation);
         return await store.ReadAsync(admission.ProjectId, m => m.Find<CommentView>(id)!, cancellation);
     }
+
+    /// <summary>A variable may be given by its name, and a term that is a variable too; what is kept is the id and the term's text.</summary>
+    private static Place Exact(IReadModel model, Place place) => place switch
+    {
+        { Kind: "variable", Part: { } name } when model.Find<DatasetView>(place.Id) is { } dataset =>
+            place with { Part = DataDictionary.At(model, dataset).Find(name)?.VariableId ?? name },
+        { Kind: "term", Part: { } name } when model.Find<RevisionView>(place.Id) is { } revision && model.Find<PathView>(revision.PathId) is { } path
+            && revision.Terms.Concat(path.Plan.Candidates).OfType<VariableTerm>().FirstOrDefault(t => t.Variable == name) is { } term =>
+            place with { Part = term.Text },
+        _ => place,
+    };
 
     private static CommentView Root(IReadModel model, string commentId)
     {

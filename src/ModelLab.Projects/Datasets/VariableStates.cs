@@ -42,7 +42,9 @@ public sealed class VariableStates(DatasetColumns columns)
             Unit = Cleared(change.Unit, before.Unit, "unit"),
             Note = Cleared(change.Note, before.Note, "note"),
             Kind = change.Kind ?? before.Kind,
-            Confirmed = true,
+
+            // Naming the kind confirms it, and so does sending nothing but a reason; describing something else does not.
+            Confirmed = before.Confirmed || change.Kind is not null || change is { Label: null, Unit: null, Note: null, MissingCodes: null, ReferenceCategory: null },
         };
         if (change.MissingCodes is not null)
         {
@@ -144,6 +146,9 @@ public sealed class VariableStates(DatasetColumns columns)
                 }
 
                 throw RefusedException.Invalid($"'{state.Name}' cannot be continuous: it has no value that is a number.", state.Name);
+            case VariableKind.Date when contents.Find(state.Name) is { } column && column.ProposedKind != VariableKind.Date
+                && !column.Questions.Any(q => q.Code.StartsWith("date-", StringComparison.Ordinal)):
+                throw RefusedException.Invalid($"'{state.Name}' holds no dates. Nothing was stored.", "kind");
             case VariableKind.Binary when state.Distinct != 2:
                 throw RefusedException.Invalid($"'{state.Name}' has {state.Distinct} distinct values; a binary variable has two. Nothing was stored.", "kind");
             case VariableKind.Categorical or VariableKind.Ordered when state.Distinct > 0 && contents.Categories(state.Name).Count == 0:

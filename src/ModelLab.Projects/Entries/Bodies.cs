@@ -61,6 +61,9 @@ public sealed record RevisionMade(
     string RevisionId, string PathId, int Number, DecisionRecord Decision, IReadOnlyList<Term> Terms, string? PreparationId,
     AnalysedRows Rows, RevisionFigures Figures, double? FullModelMeanSquare, Sha256Hash Fingerprint, IReadOnlyList<string> Methods) : IEntryBody;
 
+/// <summary>The path's rule was run: what it took, and why it stopped. Written also where it took nothing.</summary>
+public sealed record RuleRun(string PathId, string AfterRevisionId, IReadOnlyList<string> RevisionIds, string Ending) : IEntryBody;
+
 /// <summary>A remark was made.</summary>
 public sealed record CommentMade(string CommentId, Place Place, string? ReplyTo, string Text) : IEntryBody;
 

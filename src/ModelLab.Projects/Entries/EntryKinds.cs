@@ -22,6 +22,7 @@ public static class EntryKinds
         ["preparation-made/1"] = typeof(PreparationMade),
         ["path-started/1"] = typeof(PathStarted),
         ["revision/1"] = typeof(RevisionMade),
+        ["rule-run/1"] = typeof(RuleRun),
         ["comment-made/1"] = typeof(CommentMade),
         ["comment-settled/1"] = typeof(CommentSettled),
         ["finding-raised/1"] = typeof(FindingRaised),

@@ -27,24 +27,20 @@ public sealed class ChooseByRule(ProjectGate gate, AnalysisDataLoader loader, Pa
             ?? throw RefusedException.Invalid("This path has no choosing rule: people decide each step. Start a path or side path with a rule.", "rule");
         var data = await loader.LoadAsync(projectId, standing.Path.Plan, standing.Preparation, cancellation);
         var chosen = await Task.Run(() => Run(standing, data, record.ToRule(), reason, cancellation), cancellation);
-        if (!preview && chosen.Revisions.Count > 0)
+        if (!preview)
         {
+            var run = new RuleRun(pathId, request.After!, [.. chosen.Revisions.Select(r => r.Body.RevisionId)], chosen.Ending);
             await gate.RecordAsync(
                 admission,
-                [.. chosen.Revisions.SelectMany(r => r.Acts)],
+                [.. chosen.Revisions.SelectMany(r => r.Acts), new Act(run, reason)],
                 m => PathDesk.RequireAfter(m, pathId, request.After),
                 cancellation,
                 [data.RowsContent]);
         }
 
-        var readings = new List<RevisionReading>();
-        foreach (var revision in chosen.Revisions)
-        {
-            readings.Add(preview
-                ? await reader.PreviewAsync(projectId, revision, null, cancellation)
-                : await reader.ReadAsync(projectId, revision.Body.RevisionId, cancellation));
-        }
-
+        var readings = preview
+            ? await reader.PreviewAsync(projectId, chosen.Revisions, null, cancellation)
+            : await reader.ReadAsync(projectId, chosen.Revisions.Select(r => r.Body.RevisionId), cancellation);
         return new ChosenByRule(readings, chosen.Ending);
     }
 

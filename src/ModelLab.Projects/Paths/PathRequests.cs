@@ -30,7 +30,26 @@ public sealed record StartRequest(
 /// <param name="Reason">Why.</param>
 /// <param name="After">Id of the last revision that the caller has seen.</param>
 public sealed record DecisionRequest(
-    DecisionKind? Kind, Term? Term, IReadOnlyList<long>? Rows, ExclusionCause? Cause, string? FromRevisionId, string? Reason, string? After);
+    DecisionKind? Kind, Term? Term, IReadOnlyList<long>? Rows, ExclusionCause? Cause, string? FromRevisionId, string? Reason, string? After)
+{
+    /// <summary>Refuses a member that has no meaning for the kind of decision: it would be ignored, and the person believe otherwise.</summary>
+    public void RequireOnlyWhatBelongs()
+    {
+        var rows = Kind is DecisionKind.ExcludeRows or DecisionKind.RestoreRows;
+        RequireAbsent(Term is not null && Kind is not (DecisionKind.Remove or DecisionKind.Add), "term");
+        RequireAbsent(Rows is not null && !rows, "rows");
+        RequireAbsent(Cause is not null && Kind != DecisionKind.ExcludeRows, "cause");
+        RequireAbsent(FromRevisionId is not null && Kind != DecisionKind.Restart, "fromRevisionId");
+
+        static void RequireAbsent(bool stray, string member)
+        {
+            if (stray)
+            {
+                throw RefusedException.Invalid($"'{member}' has no meaning for this kind of decision. Leave it out, or send it with the decision that it belongs to.", member);
+            }
+        }
+    }
+}
 
 /// <summary>The rule run to its end.</summary>
 /// <param name="Reason">Why.</param>

@@ -25,6 +25,7 @@ public sealed class TakeDecision(
         Caller caller, string projectId, string pathId, DecisionRequest request, bool preview, CancellationToken cancellation)
     {
         var admission = await gate.EnterAsync(caller, projectId, Role.Analyst, cancellation);
+        request.RequireOnlyWhatBelongs();
         var reason = preview && string.IsNullOrWhiteSpace(request.Reason) ? "preview" : Reasons.Require(request.Reason);
         var standing = await desk.StandingAsync(projectId, pathId, request.After, cancellation);
         var taken = request.Kind switch
@@ -37,7 +38,7 @@ public sealed class TakeDecision(
         };
         if (preview)
         {
-            return await reader.PreviewAsync(projectId, taken.Revision, taken.Labels, cancellation);
+            return (await reader.PreviewAsync(projectId, [taken.Revision], taken.Labels, cancellation))[0];
         }
 
         await gate.RecordAsync(admission, taken.Acts, m => PathDesk.RequireAfter(m, pathId, request.After), cancellation, [taken.Content]);

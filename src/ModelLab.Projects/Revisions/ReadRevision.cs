@@ -33,13 +33,7 @@ public sealed class ReadRevision(ProjectGate gate, IProjectStore store, Revision
         await gate.EnterAsync(caller, projectId, Role.Reader, cancellation);
         var path = await store.ReadAsync(projectId, m => m.Find<PathView>(pathId) ?? throw RefusedException.NotFound("such path"), cancellation);
         var ids = await store.ReadAsync(projectId, m => m.All<RevisionView>().Where(r => r.PathId == pathId).OrderBy(r => r.Number).Select(r => r.Id).ToList(), cancellation);
-        var revisions = new List<RevisionReading>();
-        foreach (var id in ids)
-        {
-            revisions.Add(await reader.ReadAsync(projectId, id, cancellation));
-        }
-
-        return new PathReading(path, revisions);
+        return new PathReading(path, await reader.ReadAsync(projectId, ids, cancellation));
     }
 
     /// <summary>All paths of a project, oldest first.</summary>

@@ -1,4 +1,5 @@
 using ModelLab.Projects.Entries;
+using ModelLab.Projects.Views;
 
 namespace ModelLab.Projects.Revisions;
 
@@ -6,7 +7,7 @@ namespace ModelLab.Projects.Revisions;
 public static class RevisionNotices
 {
     /// <summary>The notices of a revision of a path, most important first.</summary>
-    public static IReadOnlyList<string> For(PathPlan plan, RevisionMade revision, IReadOnlyList<DecisionRecord> decisionsSoFar)
+    public static IReadOnlyList<string> For(PathPlan plan, RevisionMade revision, PreparationView? preparation, IReadOnlyList<DecisionRecord> decisionsSoFar)
     {
         var notices = new List<string>();
         if (revision.Figures.Fit.ExactFit)
@@ -17,6 +18,12 @@ public static class RevisionNotices
         if (decisionsSoFar.Any(d => d.Kind is DecisionKind.Remove or DecisionKind.Add))
         {
             notices.Add("This model was reached by choosing terms on the same rows. Its p values and intervals ignore the choosing and are too good; read them beside those of the full model.");
+        }
+
+        var forInfluence = LeftOutForInfluence(preparation);
+        if (forInfluence > 0)
+        {
+            notices.Add($"{forInfluence} row{(forInfluence == 1 ? " was" : "s were")} left out because of {(forInfluence == 1 ? "its" : "their")} influence on the model. A row that fits badly is not wrong for that: report the model with and without.");
         }
 
         if (!plan.Intercept)
@@ -31,5 +38,25 @@ public static class RevisionNotices
 
         notices.Add("Association is not cause. The figures describe these rows; decisions about one person or household need qualified judgement, and local law, ethics approval and professional standards decide what may be done with them.");
         return notices;
+    }
+
+    /// <summary>Rows excluded for influence and not brought back since.</summary>
+    private static int LeftOutForInfluence(PreparationView? preparation)
+    {
+        var rows = new HashSet<long>();
+        foreach (var step in preparation?.Steps ?? [])
+        {
+            switch (step)
+            {
+                case { Kind: StepKind.ExcludeRows, Cause: ExclusionCause.Influence }:
+                    rows.UnionWith(step.Rows!);
+                    break;
+                case { Kind: StepKind.RestoreRows }:
+                    rows.ExceptWith(step.Rows!);
+                    break;
+            }
+        }
+
+        return rows.Count;
     }
 }

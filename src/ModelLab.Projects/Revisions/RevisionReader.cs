@@ -15,26 +15,61 @@ public sealed class RevisionReader(IProjectStore store, ISourceVault vault)
 {
     /// <summary>A recorded revision.</summary>
     /// <exception cref="RefusedException">There is none, or its source was withdrawn.</exception>
-    public async Task<RevisionReading> ReadAsync(string projectId, string revisionId, CancellationToken cancellation)
+    public async Task<RevisionReading> ReadAsync(string projectId, string revisionId, CancellationToken cancellation) =>
+        (await ReadAsync(projectId, [revisionId], cancellation))[0];
+
+    /// <summary>Recorded revisions, in the order asked. What several share is unsealed once.</summary>
+    /// <exception cref="RefusedException">One does not exist, or its source was withdrawn.</exception>
+    public async Task<IReadOnlyList<RevisionReading>> ReadAsync(string projectId, IEnumerable<string> revisionIds, CancellationToken cancellation)
     {
-        var view = await store.ReadAsync(projectId, m => m.Find<RevisionView>(revisionId) ?? throw RefusedException.NotFound("such revision"), cancellation);
-        var entry = await store.EntryAsync(projectId, view.EntryNumber, cancellation);
-        return await ReadAsync(projectId, EntryKinds.Read<RevisionMade>(entry), entry, null, null, cancellation);
+        var opened = new Dictionary<string, CategoryNames>(StringComparer.Ordinal);
+        var readings = new List<RevisionReading>();
+        foreach (var id in revisionIds)
+        {
+            var view = await store.ReadAsync(projectId, m => m.Find<RevisionView>(id) ?? throw RefusedException.NotFound("such revision"), cancellation);
+            var entry = await store.EntryAsync(projectId, view.EntryNumber, cancellation);
+            readings.Add(await ReadAsync(projectId, EntryKinds.Read<RevisionMade>(entry), entry, null, null, opened, cancellation));
+        }
+
+        return readings;
     }
 
-    /// <summary>A revision that was formed and not recorded.</summary>
-    public Task<RevisionReading> PreviewAsync(string projectId, FormedRevision formed, CategoryLabels? labels, CancellationToken cancellation) =>
-        ReadAsync(projectId, formed.Body, null, formed, labels, cancellation);
+    /// <summary>Revisions that were formed and not recorded.</summary>
+    public async Task<IReadOnlyList<RevisionReading>> PreviewAsync(
+        string projectId, IEnumerable<FormedRevision> formed, CategoryLabels? labels, CancellationToken cancellation)
+    {
+        var opened = new Dictionary<string, CategoryNames>(StringComparer.Ordinal);
+        var readings = new List<RevisionReading>();
+        foreach (var revision in formed)
+        {
+            readings.Add(await ReadAsync(projectId, revision.Body, null, revision, labels, opened, cancellation));
+        }
+
+        return readings;
+    }
+
+    private async Task<CategoryNames> OpenAsync(
+        string projectId, State state, CategoryLabels? labels, Dictionary<string, CategoryNames> opened, CancellationToken cancellation)
+    {
+        var key = $"{state.Dictionary.Dataset.Id}/{state.Dictionary.Entry}/{state.Preparation?.Id}";
+        if (!opened.TryGetValue(key, out var names))
+        {
+            var contents = await SourceContents.OpenAsync(vault, projectId, state.Dictionary.Dataset, cancellation);
+            var derived = state.Preparation is null
+                ? DerivedColumns.None
+                : await DerivedColumns.OpenAsync(vault, projectId, state.Preparation, labels, state.PreparationDictionary!, cancellation);
+            opened[key] = names = new CategoryNames(state.Dictionary, contents, derived);
+        }
+
+        return names;
+    }
 
     private async Task<RevisionReading> ReadAsync(
-        string projectId, RevisionMade body, LedgerEntry? entry, FormedRevision? formed, CategoryLabels? labels, CancellationToken cancellation)
+        string projectId, RevisionMade body, LedgerEntry? entry, FormedRevision? formed, CategoryLabels? labels,
+        Dictionary<string, CategoryNames> opened, CancellationToken cancellation)
     {
         var state = await store.ReadAsync(projectId, m => Read(m, body, formed), cancellation);
-        var contents = await SourceContents.OpenAsync(vault, projectId, state.Dictionary.Dataset, cancellation);
-        var derived = state.Preparation is null
-            ? DerivedColumns.None
-            : await DerivedColumns.OpenAsync(vault, projectId, state.Preparation, labels, state.PreparationDictionary!, cancellation);
-        var names = new CategoryNames(state.Dictionary, contents, derived);
+        var names = await OpenAsync(projectId, state, labels, opened, cancellation);
         var plan = state.Path.Plan;
         var byText = body.Terms.ToDictionary(t => t.Text, StringComparer.Ordinal);
         var figures = body.Figures;
@@ -49,7 +84,7 @@ public sealed class RevisionReader(IProjectStore store, ISourceVault vault)
             figures.Losses,
             figures.Losses.Where(l => l.P is not null).Reverse().MaxBy(l => l.P)?.Term, // of equal ones the last, as the rule takes it
             figures.Fit, [], figures.Tied, state.Findings, body.PreparationId, body.Rows,
-            [.. names.Replaced(figures.Terms, byText), .. RevisionNotices.For(plan, body, [.. state.Earlier, body.Decision])], body.Fingerprint, body.Methods);
+            [.. names.Replaced(figures.Terms, byText), .. names.Absent(figures, byText), .. RevisionNotices.For(plan, body, state.Preparation, [.. state.Earlier, body.Decision])], body.Fingerprint, body.Methods);
     }
 
     private static DecisionReading Decision(DecisionRecord d, LedgerEntry? entry) =>
@@ -114,6 +149,28 @@ public sealed class RevisionReader(IProjectStore store, ISourceVault vault)
         public IEnumerable<string> Replaced(IReadOnlyList<RevisionTerm> terms, Dictionary<string, Term> byText) =>
             terms.Where(t => t.Reference is { } reference && reference != Wanted(byText[t.Term]))
                 .Select(t => $"The reference category of {t.Term} has no row among those analysed: its coefficients are read against {Category(byText[t.Term], t.Reference!.Value)}.");
+
+        /// <summary>What to say of categories without a row among those analysed: the model does not speak of them.</summary>
+        public IEnumerable<string> Absent(RevisionFigures figures, Dictionary<string, Term> byText)
+        {
+            foreach (var term in figures.Terms.Where(t => t.Reference is not null))
+            {
+                var met = figures.Coefficients.Where(c => c.Term == term.Term).Select(c => c.Category).Append(term.Reference).ToHashSet();
+                var absent = Present(byText[term.Term]).Where(c => !met.Contains(c)).Select(c => Category(byText[term.Term], c)).ToList();
+                if (absent.Count > 0)
+                {
+                    yield return $"{string.Join(", ", absent)} of {term.Term} {(absent.Count == 1 ? "has" : "have")} no row among those analysed: the model says nothing about {(absent.Count == 1 ? "it" : "them")}.";
+                }
+            }
+        }
+
+        private IEnumerable<int> Present(Term term)
+        {
+            var name = term.Variables[0];
+            return derived.Makes(name)
+                ? Enumerable.Range(0, derived.Categories(name).Count)
+                : contents.Present(name, dictionary.Require(name).MissingCodes);
+        }
 
         private int? Wanted(Term term)
         {
