@@ -68,6 +68,29 @@ public sealed class PathTests : IDisposable
     }
 
     [Fact]
+    public async Task Rows_left_out_for_influence_and_categories_without_rows_are_said()
+    {
+        var (project, first, _) = await PenguinsAsync();
+        Assert.DoesNotContain(first.Notices, n => n.Contains("influence", StringComparison.Ordinal) || n.Contains("no row", StringComparison.Ordinal));
+        var species = System.Text.Encoding.UTF8.GetString(Bench.Fixture("penguins.csv")).Split('\n').Skip(1).Select((line, i) => (line, row: (long)i + 1));
+        var chinstraps = species.Where(r => r.line.StartsWith("Chinstrap", StringComparison.Ordinal)).Select(r => r.row).ToList();
+        var without = await bench.Get<TakeDecision>().ExecuteAsync(
+            Bench.Analyst, project, first.PathId,
+            new DecisionRequest(DecisionKind.ExcludeRows, null, chinstraps, ExclusionCause.Influence, null, "to see", first.Id), false, Bench.Stop);
+        Assert.Contains(without.Notices, n => n.StartsWith("Chinstrap of species has no row", StringComparison.Ordinal));
+        Assert.Contains(without.Notices, n => n.StartsWith($"{chinstraps.Count} rows were left out because of their influence", StringComparison.Ordinal));
+    }
+
+    [Fact]
+    public async Task A_member_that_has_no_meaning_for_the_decision_is_refused()
+    {
+        var (project, first, _) = await PenguinsAsync();
+        var refused = await Assert.ThrowsAsync<RefusedException>(() => bench.Get<TakeDecision>().ExecuteAsync(
+            Bench.Analyst, project, first.PathId, new DecisionRequest(DecisionKind.Remove, new VariableTerm("island"), [1], null, null, "why", first.Id), false, Bench.Stop));
+        Assert.Equal("rows", Assert.Single(refused.Details).Column);
+    }
+
+    [Fact]
     public async Task A_restart_takes_up_all_candidates_or_an_earlier_revision()
     {
         var (project, first, _) = await PenguinsAsync();

@@ -61,6 +61,12 @@ public sealed class PenguinsJourneyTests : IDisposable
         Assert.Equal(["island"], chosen.Revisions.Select(r => r.Decision.Term));
         Assert.All(chosen.Revisions, r => Assert.Equal(333, r.N));
         Assert.All(chosen.Revisions, r => Assert.Contains(r.Notices, n => n.Contains("ignore the choosing", StringComparison.Ordinal)));
+        var run = EntryKinds.Read<RuleRun>(Ledger.Entries.LedgerEntry.Parse(bench.Store.Entries(project)[^1]));
+        Assert.Equal(chosen.Revisions.Select(r => r.Id), run.RevisionIds);
+        Assert.Equal(chosen.Ending, run.Ending);
+        var again = await bench.Get<ChooseByRule>().ExecuteAsync(Bench.Analyst, project, path.Path.Id, new ChooseRequest("once more", chosen.Revisions[^1].Id), false, Bench.Stop);
+        Assert.Empty(again.Revisions);
+        Assert.Equal("once more", Ledger.Entries.LedgerEntry.Parse(bench.Store.Entries(project)[^1]).Reason);
         var replay = await bench.Get<ReplayProject>().ExecuteAsync(Bench.Analyst, project, Bench.Stop);
         Assert.True(replay.Ok);
         Assert.Equal(2, replay.Revisions.Count);

@@ -30,7 +30,7 @@ internal sealed class RevisionReplay(string projectId, RecordedProject record, I
             var data = await LoadAsync(plan, revision, cancellation);
             await CompareRowsAsync(revision, data, problems, cancellation);
             again = await Task.Run(() => RevisionFitter.Fit(data, plan, revision.Terms), cancellation);
-            if (revision.Methods.Take(RevisionFitter.Methods.Count).SequenceEqual(RevisionFitter.Methods) && again.Fingerprint != revision.Fingerprint)
+            if (MadeByTheSameMethods(revision) && again.Fingerprint != revision.Fingerprint)
             {
                 problems.Add("What the figures depend on is not the same.");
             }
@@ -79,10 +79,14 @@ internal sealed class RevisionReplay(string projectId, RecordedProject record, I
         }
     }
 
+    private static bool MadeByTheSameMethods(RevisionMade revision) =>
+        revision.Methods.Take(RevisionFitter.Methods.Count).SequenceEqual(RevisionFitter.Methods, StringComparer.Ordinal);
+
     private static double? Compare(RevisionMade revision, FittedRevision again, PathSoFar? before, PathPlan plan, List<string> problems)
     {
         var figures = FigureComparison.LargestRelativeDifference(
-            new ComparedFigures(revision.Figures, revision.FullModelMeanSquare), new ComparedFigures(again.Figures, again.FullModelMeanSquare));
+            new ComparedFigures(revision.Figures, revision.FullModelMeanSquare), new ComparedFigures(again.Figures, again.FullModelMeanSquare),
+            laterFigures: !MadeByTheSameMethods(revision));
         Tell(figures, "The figures", problems);
         if (revision.Decision.Kind != DecisionKind.Remove)
         {
