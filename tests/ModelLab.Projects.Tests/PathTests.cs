@@ -10,6 +10,7 @@ using ModelLab.Projects.Replaying;
 using ModelLab.Projects.Revisions;
 using ModelLab.Projects.Tests.Hosting;
 using ModelLab.Projects.Views;
+using ModelLab.Statistics.Designs;
 
 namespace ModelLab.Projects.Tests;
 
