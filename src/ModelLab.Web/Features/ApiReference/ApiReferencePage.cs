@@ -15,14 +15,22 @@ public static class ApiReferencePage
         var page = new StringBuilder();
         page.Append("<!doctype html><html lang=\"en\"><head><meta charset=\"utf-8\"><meta name=\"viewport\" content=\"width=device-width\">")
             .Append("<title>ModelLab: HTTP API</title><link rel=\"stylesheet\" href=\"/openapi/reference.css\"></head><body><main>")
-            .Append("<h1>HTTP API, version ").Append(Text(document.Info.Version)).Append("</h1><p>").Append(Text(document.Info.Description)).Append("</p>")
+            .Append("<h1>HTTP API, version ").Append(Text(document.Info.Version)).Append("</h1><p>").Append(Prose(document.Info.Description)).Append("</p>")
             .Append("<p>The same as JSON: <a href=\"/openapi/v1.json\">/openapi/v1.json</a> (OpenAPI).</p>");
         var operations = document.Paths
             .SelectMany(p => (p.Value.Operations ?? []).Select(o => new Operation(p.Key, o.Key.Method, o.Value)))
-            .GroupBy(o => o.Description.Tags?.FirstOrDefault()?.Name ?? string.Empty);
+            .GroupBy(o => o.Description.Tags?.FirstOrDefault()?.Name ?? string.Empty)
+            .ToList();
+        page.Append("<nav aria-label=\"Contents\"><ul>");
         foreach (var group in operations)
         {
-            page.Append("<h2>").Append(Text(group.Key)).Append("</h2>");
+            page.Append("<li><a href=\"#").Append(Anchor(group.Key)).Append("\">").Append(Text(group.Key)).Append("</a></li>");
+        }
+
+        page.Append("</ul></nav>");
+        foreach (var group in operations)
+        {
+            page.Append("<h2 id=\"").Append(Anchor(group.Key)).Append("\">").Append(Text(group.Key)).Append("</h2>");
             foreach (var operation in group)
             {
                 Write(page, operation);
@@ -36,10 +44,10 @@ public static class ApiReferencePage
     {
         var description = operation.Description;
         page.Append("<details id=\"").Append(Text(description.OperationId)).Append("\"><summary><code><b>").Append(Text(operation.Method)).Append("</b> ")
-            .Append(Text(operation.Path)).Append("</code><span>").Append(Text(description.Summary)).Append("</span></summary>");
+            .Append(Text(operation.Path)).Append("</code><span>").Append(Prose(description.Summary)).Append("</span></summary>");
         if (!string.IsNullOrEmpty(description.Description))
         {
-            page.Append("<p>").Append(Text(description.Description)).Append("</p>");
+            page.Append("<p>").Append(Prose(description.Description)).Append("</p>");
         }
 
         page.Append(description.Security is { Count: > 0 } ? "<p>Needs a token or a session.</p>" : "<p>Open to everybody.</p>");
@@ -49,7 +57,7 @@ public static class ApiReferencePage
             foreach (var parameter in parameters)
             {
                 page.Append("<dt><code>").Append(Text(parameter.Name)).Append("</code> in the ").Append(Text(parameter.In.ToString())).Append(parameter.Required ? ", needed" : string.Empty)
-                    .Append("</dt><dd>").Append(Text(parameter.Description)).Append("</dd>");
+                    .Append("</dt><dd>").Append(Prose(parameter.Description)).Append("</dd>");
             }
 
             page.Append("</dl>");
@@ -92,7 +100,7 @@ public static class ApiReferencePage
             page.Append("<li><code>").Append(Text(name)).Append("</code> ").Append(Text(TypeOf(member))).Append(schema.Required?.Contains(name) == true ? ", needed" : string.Empty);
             if (!string.IsNullOrEmpty(member.Description))
             {
-                page.Append(". ").Append(Text(member.Description));
+                page.Append(". ").Append(Prose(member.Description));
             }
 
             WriteSchema(page, member, depth + 1);
@@ -116,6 +124,17 @@ public static class ApiReferencePage
 #pragma warning disable CA1308 // words for people, not keys
     private static string WebName(string type) => type.ToLowerInvariant();
 #pragma warning restore CA1308
+
+    /// <summary>Text in which words between backticks are code.</summary>
+    private static string Prose(string? text)
+    {
+        var parts = Text(text).Split('`');
+        return parts.Length % 2 == 0
+            ? string.Join('`', parts)
+            : string.Concat(parts.Select((part, i) => i % 2 == 0 ? part : $"<code>{part}</code>"));
+    }
+
+    private static string Anchor(string heading) => Text(heading.Replace(' ', '-'));
 
     private static string Text(string? text) => WebUtility.HtmlEncode(text ?? string.Empty);
 
