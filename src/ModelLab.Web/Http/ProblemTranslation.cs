@@ -6,6 +6,7 @@ using Microsoft.Net.Http.Headers;
 using ModelLab.Intake;
 using ModelLab.Projects;
 using ModelLab.Statistics.Designs;
+using ModelLab.Store.Vault;
 using ModelLab.Store.Writing;
 
 namespace ModelLab.Web.Http;
@@ -34,6 +35,13 @@ public static partial class ProblemTranslation
     /// <summary>The problem of a fault. Of what happened inside it says nothing; the log has it under the trace id.</summary>
     public static ProblemDetails OfFault(HttpContext context, Exception exception)
     {
+        if (exception is VaultDamagedException damaged)
+        {
+            return Problems.Of(
+                context, StatusCodes.Status500InternalServerError, "damaged",
+                $"{damaged.Message} The store was changed from outside. Whoever runs the server runs its check and restores a backup.");
+        }
+
         if (exception is StorageFailedException { Full: false } storage)
         {
             return Problems.Of(context, StatusCodes.Status503ServiceUnavailable, "storage", $"{storage.Message} Nothing of this was stored; send the request again in a moment.");

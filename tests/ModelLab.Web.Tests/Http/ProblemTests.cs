@@ -3,6 +3,7 @@ using Microsoft.AspNetCore.Http;
 using ModelLab.Intake;
 using ModelLab.Projects;
 using ModelLab.Statistics.Designs;
+using ModelLab.Store.Vault;
 using ModelLab.Store.Writing;
 using ModelLab.Web.Http;
 using ModelLab.Web.Tests.Hosting;
@@ -49,6 +50,15 @@ public sealed class ProblemTests(SharedServer shared)
         Assert.Equal(422, problem.Status);
         Assert.Equal("rankDeficient", problem.Extensions["kind"]);
         Assert.Equal([new RefusalDetail(null, "c", "c is already determined by intercept, a.")], Assert.IsAssignableFrom<IReadOnlyList<RefusalDetail>>(problem.Extensions["errors"]));
+    }
+
+    [Fact]
+    public void A_store_that_was_changed_from_outside_is_said()
+    {
+        var problem = ProblemTranslation.OfFault(new DefaultHttpContext(), new VaultDamagedException("Chunk 0 of source s is not what was stored."));
+        Assert.Equal(500, problem.Status);
+        Assert.Equal("damaged", problem.Extensions["kind"]);
+        Assert.StartsWith("Chunk 0 of source s is not what was stored. The store was changed from outside.", problem.Detail, StringComparison.Ordinal);
     }
 
     [Theory]

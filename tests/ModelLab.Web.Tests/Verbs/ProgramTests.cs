@@ -53,6 +53,18 @@ public sealed partial class ProgramTests
     }
 
     [Fact]
+    public async Task A_data_folder_that_cannot_be_made_is_said_plainly()
+    {
+        using var program = new ProgramProcess();
+        var file = Path.Combine(program.Folder, "a-file");
+        await File.WriteAllTextAsync(file, "no folder", TestContext.Current.CancellationToken);
+        var result = await program.RunAsync("--ModelLab:DataFolder", Path.Combine(file, "data"));
+        Assert.Equal(1, result.ExitCode);
+        Assert.Contains("The folders of data and keys", result.Errors, StringComparison.Ordinal);
+        Assert.DoesNotContain("Unhandled", result.Errors, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public async Task A_wrong_setting_stops_the_start_with_its_name()
     {
         using var program = new ProgramProcess();

@@ -1,6 +1,7 @@
 using Microsoft.AspNetCore.Identity;
 using ModelLab.Projects;
 using ModelLab.Store.Accounts;
+using ModelLab.Store.Writing;
 using ModelLab.Web.Settings;
 
 namespace ModelLab.Web.Features.SignIn;
@@ -55,13 +56,22 @@ public sealed partial class SignInDesk(SignInAttempts attempts, UserManager<Acco
         var key = accounts.NormalizeEmail(email.Trim());
         using var turn = await attempts.TakeTurnAsync(key, cancellation);
         var account = await accounts.FindByEmailAsync(email.Trim());
-        var result = account is null ? TryUnknown(key, password) : await TryAccountAsync(account, password);
-        if (result.Outcome is SignInOutcome.Wrong)
+        try
         {
-            attempts.Addresses.Failed(address);
-        }
+            var result = account is null ? TryUnknown(key, password) : await TryAccountAsync(account, password);
+            if (result.Outcome is SignInOutcome.Wrong)
+            {
+                attempts.Addresses.Failed(address);
+            }
 
-        return result;
+            return result;
+        }
+        catch (StorageFailedException)
+        {
+            // A full disk takes no count for the account: the address is counted all the same, so that nobody may try for ever.
+            attempts.Addresses.Failed(address);
+            throw;
+        }
     }
 
     private SignInResult TryUnknown(string key, string password)

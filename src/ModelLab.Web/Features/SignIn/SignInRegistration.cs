@@ -69,9 +69,18 @@ public static class SignInRegistration
     private static FileSystemXmlRepository SessionKeys(StorageSettings storage, ILoggerFactory log)
     {
         var folder = Path.Combine(storage.KeysFolder, "sessions");
-        PrivateFiles.MakeFolder(storage.DataFolder);
-        PrivateFiles.MakeFolder(storage.KeysFolder);
-        PrivateFiles.MakeFolder(folder);
+        try
+        {
+            PrivateFiles.MakeFolder(storage.DataFolder);
+            PrivateFiles.MakeFolder(storage.KeysFolder);
+            PrivateFiles.MakeFolder(folder);
+        }
+        catch (Exception e) when (e is UnauthorizedAccessException or IOException)
+        {
+            throw new StoreSettingsException(
+                $"The folders of data and keys, {storage.DataFolder} and {storage.KeysFolder}, cannot be made or written to: {e.Message} Give this account the right to write there, or name other folders (ModelLab:DataFolder, ModelLab:KeysFolder).");
+        }
+
         return new FileSystemXmlRepository(new DirectoryInfo(folder), log);
     }
 }
