@@ -1,6 +1,7 @@
 using System.Runtime.CompilerServices;
 using System.Text.Json;
 using Microsoft.EntityFrameworkCore;
+using ModelLab.Ledger;
 using ModelLab.Ledger.Entries;
 using ModelLab.Projects;
 using ModelLab.Projects.Entries;
@@ -127,6 +128,17 @@ public sealed class SqlProjectStore(
 
             next = page[^1].Number + 1;
         }
+    }
+
+    /// <inheritdoc/>
+    public async Task<Sha256Hash?> StoredHashAsync(string ledgerId, long number, CancellationToken cancellation)
+    {
+        await using var context = await contexts.CreateDbContextAsync(cancellation);
+        var found = await context.Entries.AsNoTracking()
+            .Where(e => e.LedgerId == ledgerId && e.Number == number)
+            .Select(e => new { e.Hash })
+            .SingleOrDefaultAsync(cancellation);
+        return found?.Hash;
     }
 
     /// <inheritdoc/>

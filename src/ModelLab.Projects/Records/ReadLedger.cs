@@ -1,4 +1,5 @@
 using ModelLab.Ledger.Entries;
+using ModelLab.Ledger.Receipts;
 using ModelLab.Ledger.Verification;
 using ModelLab.Projects.People;
 using ModelLab.Projects.Storage;
@@ -42,13 +43,18 @@ public sealed class ReadLedger(ProjectGate gate, IProjectStore store)
     }
 
     /// <summary>Verifies every stored byte: form, numbers, chain, tree, and the head (a cut tail).</summary>
-    public async Task<VerificationResult> VerifyAsync(Caller caller, string projectId, CancellationToken cancellation)
+    public Task<VerificationResult> VerifyAsync(Caller caller, string projectId, CancellationToken cancellation) =>
+        VerifyAsync(caller, projectId, [], new ReceiptVerifier(), cancellation);
+
+    /// <summary>The same, compared with receipts kept elsewhere: what they saw must still stand there.</summary>
+    public async Task<VerificationResult> VerifyAsync(
+        Caller caller, string projectId, IReadOnlyList<Receipt> receipts, ReceiptVerifier receiptVerifier, CancellationToken cancellation)
     {
         await gate.EnterAsync(caller, projectId, Role.Reader, cancellation);
 
         // The head is read first: entries appended meanwhile come after it and are left to the next verification.
         var head = await store.HeadAsync(projectId, cancellation);
-        var verifier = new LedgerVerifier(projectId);
+        var verifier = new LedgerVerifier(projectId, receipts, receiptVerifier);
         var taken = 0L;
         await foreach (var bytes in store.EntriesAsync(projectId, 1, cancellation))
         {
@@ -60,7 +66,13 @@ public sealed class ReadLedger(ProjectGate gate, IProjectStore store)
             verifier.Add(bytes);
         }
 
-        return verifier.Finish(head);
+        var result = verifier.Finish(head);
+
+        // A changed entry is noticed by the one after it. The hash that lies beside its bytes tells which of the two it was.
+        var last = result.Head.Count;
+        return !result.Ok && last > 0 && await store.StoredHashAsync(projectId, last, cancellation) is { } stored && stored != result.Head.LastHash
+            ? result with { FirstBad = last, Problem = $"Entry {last} was changed: its bytes no longer have the hash that was stored beside them." }
+            : result;
     }
 
     /// <summary>The head of the ledger, to be signed as a receipt.</summary>

@@ -62,6 +62,9 @@ public interface IProjectStore : IReadModelSource
     /// <summary>Stored bytes of the entries with number ≥ <paramref name="from"/>, in order, as they stand in the store.</summary>
     IAsyncEnumerable<ReadOnlyMemory<byte>> EntriesAsync(string ledgerId, long from, CancellationToken cancellation);
 
+    /// <summary>The hash stored beside an entry's bytes, which tells a changed entry from the one after it; null where there is no such entry.</summary>
+    Task<Sha256Hash?> StoredHashAsync(string ledgerId, long number, CancellationToken cancellation);
+
     /// <summary>One entry.</summary>
     /// <exception cref="RefusedException">There is none of that number.</exception>
     Task<LedgerEntry> EntryAsync(string ledgerId, long number, CancellationToken cancellation);

@@ -36,10 +36,12 @@ public static class AppendOnlyTriggers
     public static IReadOnlyList<string> Names { get; } = [.. Triggers.Select(t => t.Name)];
 
     /// <summary>Makes every trigger that is missing or says something else, then checks them all.</summary>
+    /// <returns>Names of those that were made.</returns>
     /// <exception cref="StoreUnusableException">One could not be made.</exception>
-    public static void Ensure(SqliteConnection connection)
+    public static IReadOnlyList<string> Ensure(SqliteConnection connection)
     {
-        foreach (var trigger in Triggers.Where(t => Stored(connection, t.Name) != t.Sql))
+        var missing = Triggers.Where(t => Stored(connection, t.Name) != t.Sql).ToList();
+        foreach (var trigger in missing)
         {
             connection.Run($"BEGIN IMMEDIATE; DROP TRIGGER IF EXISTS {trigger.Name}; {trigger.Sql}; COMMIT;");
         }
@@ -48,6 +50,8 @@ public static class AppendOnlyTriggers
         {
             throw new StoreUnusableException(first);
         }
+
+        return [.. missing.Select(t => t.Name)];
     }
 
     /// <summary>Drops them, so that a migration may rebuild tables. Each start makes them anew.</summary>

@@ -47,7 +47,7 @@ internal sealed class SchemaMigration(StorePaths paths, TimeProvider time)
 
     /// <summary>Migrates where there is something to do.</summary>
     /// <exception cref="StoreUnusableException">The database is of a newer program, or the migration failed; the state before it was put back.</exception>
-    public void Migrate()
+    public bool Migrate()
     {
         var exists = File.Exists(paths.Database);
         ClearLock();
@@ -57,7 +57,7 @@ internal sealed class SchemaMigration(StorePaths paths, TimeProvider time)
         RefuseNewer(applied, known);
         if (known.Except(applied).FirstOrDefault() is not { } pending)
         {
-            return;
+            return false;
         }
 
         PrivateFiles.WriteNew(Marker, Encoding.UTF8.GetBytes(exists && HoldsTables() ? Snapshot(pending) : NewDatabase));
@@ -78,6 +78,7 @@ internal sealed class SchemaMigration(StorePaths paths, TimeProvider time)
         }
 
         File.Delete(Marker);
+        return true;
     }
 
     /// <summary>For the program's verbs, which never migrate: refuses a database that is not of this program's schema.</summary>

@@ -1,4 +1,5 @@
 using Microsoft.Data.Sqlite;
+using Microsoft.Extensions.Logging;
 using ModelLab.Store.Keys;
 using ModelLab.Store.Sqlite.Connections;
 using ModelLab.Store.Sqlite.Keys;
@@ -11,8 +12,8 @@ namespace ModelLab.Store.Sqlite.Starting;
 /// <summary>
 /// Makes the store ready before anything else uses it. Holds the data folder against a second server until disposed of.
 /// </summary>
-public sealed class StoreStartup(
-    StorePaths paths, SqliteSourceKeys keys, ReceiptSigningKey signingKey, ReadModelRebuild readModels, OrphanSweep sweep, TimeProvider time) : IDisposable
+public sealed partial class StoreStartup(
+    StorePaths paths, SqliteSourceKeys keys, ReceiptSigningKey signingKey, ReadModelRebuild readModels, OrphanSweep sweep, TimeProvider time, ILogger<StoreStartup>? log = null) : IDisposable
 {
     private ServerLock? held;
 
@@ -31,11 +32,16 @@ public sealed class StoreStartup(
         keys.Prepare();
         signingKey.Open().Dispose();
         RefuseDamaged();
-        migration.Migrate();
+        var migrated = migration.Migrate();
         using (var connection = SqliteConnections.Open(paths.Database))
         {
             connection.Run("PRAGMA journal_mode=WAL");
-            AppendOnlyTriggers.Ensure(connection);
+            var made = AppendOnlyTriggers.Ensure(connection);
+            if (!migrated && made.Count > 0 && log is not null)
+            {
+                LogTriggersGone(log, string.Join(", ", made));
+            }
+
             connection.Run(
                 "INSERT INTO store_facts (name, value) VALUES ('store-id', @id) ON CONFLICT (name) DO NOTHING",
                 new SqliteParameter("@id", Guid.NewGuid().ToString("N")));
@@ -51,6 +57,9 @@ public sealed class StoreStartup(
 
     /// <summary>Lets go of the data folder.</summary>
     public void Dispose() => held?.Dispose();
+
+    [LoggerMessage(LogLevel.Critical, "Triggers that protect what is append-only were gone or changed, and no migration had done it: {Triggers}. They were made anew. Somebody changed the database from outside: run 'check', and compare the ledgers with receipts kept elsewhere")]
+    private static partial void LogTriggersGone(ILogger log, string triggers);
 
     private void RefuseDamaged()
     {

@@ -81,6 +81,7 @@ public sealed class MemoryStore : IProjectStore, ISourceVault, IPeople
             foreach (var (entry, draft) in appended.Entries.Zip(batch.Drafts))
             {
                 kept.Entries.Add(entry.CanonicalBytes.ToArray());
+                kept.Hashes[entry.Number] = entry.Hash;
                 ProjectProjection.Apply(LedgerEntry.Parse(entry.CanonicalBytes), kept.Model);
                 if (draft.Sealed is not null)
                 {
@@ -109,6 +110,9 @@ public sealed class MemoryStore : IProjectStore, ISourceVault, IPeople
             yield return bytes;
         }
     }
+
+    public Task<Sha256Hash?> StoredHashAsync(string ledgerId, long number, CancellationToken cancellation) =>
+        Task.FromResult(ledgers[ledgerId].Hashes.TryGetValue(number, out var hash) ? hash : (Sha256Hash?)null);
 
     public Task<LedgerEntry> EntryAsync(string ledgerId, long number, CancellationToken cancellation) =>
         Task.FromResult(LedgerEntry.Parse(ledgers[ledgerId].Entries[(int)number - 1]));
@@ -147,6 +151,8 @@ public sealed class MemoryStore : IProjectStore, ISourceVault, IPeople
         public LedgerHead Head { get; set; } = LedgerHead.Empty(id);
 
         public List<byte[]> Entries { get; } = [];
+
+        public Dictionary<long, Sha256Hash> Hashes { get; } = [];
 
         public MemoryReadModel Model { get; } = new();
 

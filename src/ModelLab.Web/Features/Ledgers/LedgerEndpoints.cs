@@ -1,9 +1,11 @@
 using System.Security.Claims;
 using System.Text.Json.Nodes;
 using ModelLab.Ledger;
+using ModelLab.Ledger.Canonical;
 using ModelLab.Ledger.Entries;
 using ModelLab.Ledger.Receipts;
 using ModelLab.Ledger.Verification;
+using ModelLab.Projects;
 using ModelLab.Projects.Records;
 using ModelLab.Projects.Replaying;
 using ModelLab.Store.Keys;
@@ -24,12 +26,13 @@ public static class LedgerEndpoints
             .WithName("ReadLedger")
             .WithSummary($"Entries from a number on, at most {ReadLedger.PageSize} at a time; `next` is the number to go on from, or null at the end.")
             .WithProblems(400, 404, 422);
-        group.MapPost("/ledger/verify", async (string project, ClaimsPrincipal user, ReadLedger ledger, CancellationToken cancellation) =>
-                TypedResults.Ok(VerificationAnswer.Of(await ledger.VerifyAsync(user.ToCaller(), project, cancellation))))
+        group.MapPost("/ledger/verify", VerifyAsync)
             .WithName("VerifyLedger")
             .WithSummary("Verifies every stored entry: form, numbers, chain, tree, head. Stores nothing.")
+            .WithDescription("With receipts kept elsewhere in `receipts`, what they saw must still stand where it stood: only they show that nothing was cut off at the end.")
+            .Produces<VerificationAnswer>()
             .WithMetadata(new ReadsOnly())
-            .WithProblems(404);
+            .WithProblems(400, 404, 422);
         group.MapGet("/ledger/receipt", ReceiptAsync)
             .WithName("ReadReceipt")
             .WithSummary("A signed receipt of where the ledger stands, to be kept elsewhere: it proves later that nothing before it was cut, changed or moved.")
@@ -41,6 +44,27 @@ public static class LedgerEndpoints
             .WithSummary("Computes every revision again from the sources by the recorded decisions and compares. Stores nothing.")
             .WithMetadata(new ReadsOnly())
             .WithProblems(404, 410);
+    }
+
+    private static async Task<IResult> VerifyAsync(
+        string project, VerifyRequest? request, ClaimsPrincipal user, ReadLedger ledger, ReceiptSigningKey signing, CancellationToken cancellation)
+    {
+        using var key = signing.Open();
+        var verifier = new ReceiptVerifier([ReceiptKey.Of(key).Fingerprint]);
+        var receipts = (request?.Receipts ?? []).Select(Parse).ToList();
+        return Results.Ok(VerificationAnswer.Of(await ledger.VerifyAsync(user.ToCaller(), project, receipts, verifier, cancellation)));
+    }
+
+    private static Receipt Parse(JsonObject? receipt, int place)
+    {
+        try
+        {
+            return Receipt.Parse(CanonicalJson.Serialise(receipt));
+        }
+        catch (Exception e) when (e is FormatException or CanonicalFormException)
+        {
+            throw RefusedException.Invalid($"This is no receipt of this program: {e.Message}", $"receipts[{place}]");
+        }
     }
 
     private static async Task<IResult> ReceiptAsync(
@@ -92,12 +116,26 @@ public sealed record EntryAnswer(
 /// <param name="Root">Root of the Merkle tree over them (RFC 9162).</param>
 /// <param name="FirstBad">Number of the first bad entry, or null.</param>
 /// <param name="Problem">What is wrong with it, or null.</param>
-public sealed record VerificationAnswer(bool Ok, long Entries, Sha256Hash Head, Sha256Hash Root, long? FirstBad, string? Problem)
+/// <param name="Receipts">What the receipts sent show, in their order.</param>
+public sealed record VerificationAnswer(
+    bool Ok, long Entries, Sha256Hash Head, Sha256Hash Root, long? FirstBad, string? Problem, IReadOnlyList<ReceiptAnswer> Receipts)
 {
     /// <summary>The answer for a verification.</summary>
     public static VerificationAnswer Of(VerificationResult result) =>
-        new(result.Ok, result.Entries, result.Head.LastHash, result.Head.Root, result.FirstBad, result.Problem);
+        new(result.Ok, result.Entries, result.Head.LastHash, result.Head.Root, result.FirstBad, result.Problem,
+            [.. result.Receipts.Select(r => new ReceiptAnswer(r.Receipt.Count, r.Receipt.At, r.Check.Ok, r.Check.Problem))]);
 }
+
+/// <summary>Receipts to verify a ledger against.</summary>
+/// <param name="Receipts">The files as they were received, in any order.</param>
+public sealed record VerifyRequest(IReadOnlyList<JsonObject>? Receipts);
+
+/// <summary>What one receipt shows.</summary>
+/// <param name="Count">Entries that the ledger had when it was given.</param>
+/// <param name="At">When it was given.</param>
+/// <param name="Ok">It was signed by this server, and what it saw still stands.</param>
+/// <param name="Problem">What is wrong, or null.</param>
+public sealed record ReceiptAnswer(long Count, DateTimeOffset At, bool Ok, string? Problem);
 
 /// <summary>The members of a receipt's file.</summary>
 public sealed record ReceiptFile(

@@ -18,7 +18,7 @@ public sealed class JourneyTests(SharedServer shared)
         var project = await client.OpenProjectAsync("The whole way");
         var root = $"/api/v1/projects/{project}";
         var dataset = (await client.UploadAsync(project, Table()).JsonAsync(HttpStatusCode.Created)).Text("datasetId");
-        var described = await client.PatchJsonAsync($"{root}/datasets/{dataset}/variables/dose%20(mg)", """{"label":"Dose given","unit":"mg","reason":"From the protocol."}""").JsonAsync(HttpStatusCode.OK);
+        var described = await client.PatchJsonAsync($"{root}/datasets/{dataset}/variables/dose%20(mg)", """{"label":"Dose given","unit":"mg","kind":"continuous","reason":"From the protocol."}""").JsonAsync(HttpStatusCode.OK);
         Assert.Equal("Dose given", described.Text("label"));
         Assert.True(described["confirmed"]!.GetValue<bool>());
         var soil = await client.PatchJsonAsync($"{root}/datasets/{dataset}/variables/soil", """{"referenceCategory":"loam","reason":"The common soil."}""").JsonAsync(HttpStatusCode.OK);
@@ -118,6 +118,17 @@ public sealed class JourneyTests(SharedServer shared)
         var receipt = Receipt.Parse(await answer.Content.ReadAsByteArrayAsync(TestContext.Current.CancellationToken));
         Assert.Equal(verified.Text("root"), receipt.Root.ToString());
         Assert.Equal(verified.Text("head"), receipt.HeadHash.ToString());
+
+        var file = System.Text.Encoding.UTF8.GetString(receipt.Write());
+        var compared = await client.PostJsonAsync($"{root}/ledger/verify", $$"""{"receipts":[{{file}}]}""").JsonAsync(HttpStatusCode.OK);
+        Assert.True(compared["ok"]!.GetValue<bool>());
+        Assert.True(compared["receipts"]![0]!["ok"]!.GetValue<bool>());
+        var forged = file.Replace($"\"count\":{receipt.Count}", $"\"count\":{receipt.Count - 1}", StringComparison.Ordinal);
+        var refused = await client.PostJsonAsync($"{root}/ledger/verify", $$"""{"receipts":[{{forged}}]}""").JsonAsync(HttpStatusCode.OK);
+        Assert.False(refused["ok"]!.GetValue<bool>());
+        Assert.False(refused["receipts"]![0]!["ok"]!.GetValue<bool>());
+        var nothing = await client.PostJsonAsync($"{root}/ledger/verify", """{"receipts":[{"count":1}]}""").ProblemAsync(HttpStatusCode.UnprocessableEntity);
+        Assert.Equal("receipts[0]", nothing["errors"]![0]!.Text("column"));
     }
 
     private static string Decision(string kind, string after) =>
