@@ -1,5 +1,6 @@
 using System.Text.Json.Nodes;
 using Microsoft.EntityFrameworkCore;
+using ModelLab.Ledger.Entries;
 using ModelLab.Projects;
 using ModelLab.Store.Writing;
 
@@ -74,9 +75,7 @@ public sealed class ApiTokens(StoreWriter writer, IDbContextFactory<ModelLabCont
             var by = await ServerActors.PersonOrAdministratorAsync(context, actorId, row.PersonId);
             if (row.RevokedAt is null)
             {
-                row.RevokedAt = time.GetUtcNow();
-                await ServerLedger.RecordAsync(
-                    context, "token-revoked/1", row.RevokedAt.Value, by, null, new JsonObject { ["tokenId"] = row.Id, ["personId"] = row.PersonId });
+                await RevokeAsync(context, row, by, time.GetUtcNow());
             }
 
             return ToToken(row);
@@ -115,6 +114,22 @@ public sealed class ApiTokens(StoreWriter writer, IDbContextFactory<ModelLabCont
         }
 
         return new TokenHolder(account.ToPerson(), row.Id, row.Scope, row.ExpiresAt);
+    }
+
+    /// <summary>Revokes the tokens of a person that hold still, within the transaction of what asks for it.</summary>
+    internal static async Task RevokeAllAsync(ModelLabContext context, string personId, Author by, DateTimeOffset at)
+    {
+        var rows = await context.ApiTokens.Where(t => t.PersonId == personId && t.RevokedAt == null && t.ExpiresAt > at).OrderBy(t => t.IssuedAt).ThenBy(t => t.Id).ToListAsync();
+        foreach (var row in rows)
+        {
+            await RevokeAsync(context, row, by, at);
+        }
+    }
+
+    private static Task RevokeAsync(ModelLabContext context, ApiTokenRow row, Author by, DateTimeOffset at)
+    {
+        row.RevokedAt = at;
+        return ServerLedger.RecordAsync(context, "token-revoked/1", at, by, null, new JsonObject { ["tokenId"] = row.Id, ["personId"] = row.PersonId });
     }
 
     /// <summary>A full disk does not keep anybody from reading: when a token was last used is then not noted.</summary>

@@ -127,7 +127,7 @@ public sealed class ServerRecords(StoreWriter writer, IDbContextFactory<ModelLab
         return invitation is null ? null : (await AccountAsync(context, invitation.PersonId)).ToPerson();
     }
 
-    /// <summary>Sets the password of an invited person, ends other sessions and uses the invitation up.</summary>
+    /// <summary>Sets the password of an invited person, ends sessions, revokes API tokens and uses the invitation up: whoever needs a new password may have lost more than it.</summary>
     /// <param name="secret">The invitation.</param>
     /// <param name="passwordHash">From the password hasher of the sign-in, after its rules for passwords.</param>
     /// <param name="cancellation">Withdraws the request.</param>
@@ -145,9 +145,24 @@ public sealed class ServerRecords(StoreWriter writer, IDbContextFactory<ModelLab
             account.SecurityStamp = NewId();
             account.ConcurrencyStamp = NewId();
             context.Invitations.Remove(invitation);
-            await ServerLedger.RecordAsync(
-                context, "invitation-taken-up/1", time.GetUtcNow(), new Author(account.Id, account.Name), null, new JsonObject { ["personId"] = account.Id });
+            var (by, now) = (new Author(account.Id, account.Name), time.GetUtcNow());
+            await ServerLedger.RecordAsync(context, "invitation-taken-up/1", now, by, null, new JsonObject { ["personId"] = account.Id });
+            await ApiTokens.RevokeAllAsync(context, account.Id, by, now);
             return account.ToPerson();
+        },
+        cancellation);
+
+    /// <summary>Ends all sessions of a person, as signing out does; API tokens stay. A person without an account has none to end.</summary>
+    public Task EndSessionsAsync(string personId, CancellationToken cancellation) => writer.WriteAsync(
+        async context =>
+        {
+            if (await context.Users.SingleOrDefaultAsync(a => a.Id == personId) is { } account)
+            {
+                account.SecurityStamp = NewId();
+                account.ConcurrencyStamp = NewId();
+            }
+
+            return personId;
         },
         cancellation);
 

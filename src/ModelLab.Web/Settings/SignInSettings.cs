@@ -29,6 +29,16 @@ public sealed class SignInSettings : ISettings
     [Range(1, 24 * 30)]
     public int SessionHours { get; set; } = 12;
 
+    /// <summary>How long a session lasts at most, used or not, in hours; not less than <see cref="SessionHours"/>.</summary>
+    [Range(1, 24 * 90)]
+    public int LongestSessionHours { get; set; } = 72;
+
     /// <inheritdoc/>
-    public IEnumerable<SettingProblem> Check() => [];
+    public IEnumerable<SettingProblem> Check()
+    {
+        if (LongestSessionHours < SessionHours)
+        {
+            yield return new SettingProblem(nameof(LongestSessionHours), $"is {LongestSessionHours}, less than SessionHours ({SessionHours}).");
+        }
+    }
 }

@@ -1,5 +1,6 @@
 using ModelLab.Projects;
 using ModelLab.Store.Server;
+using ModelLab.Store.Sqlite.Upkeep;
 using ModelLab.Store.Tests.Setting;
 
 namespace ModelLab.Store.Tests.Server;
@@ -61,6 +62,39 @@ public sealed class ApiTokensTests
         Assert.Equal(RefusalKind.Forbidden, (await Assert.ThrowsAsync<RefusedException>(
             () => tokens.IssueAsync(eve, ben, "a", TokenScope.Read, Month, TestStore.Cancellation))).Kind);
         Assert.NotNull((await tokens.RevokeAsync(ada, issued.Token.Id, TestStore.Cancellation)).RevokedAt);
+    }
+
+    [Fact]
+    public async Task Taking_up_an_invitation_revokes_the_persons_tokens_that_hold()
+    {
+        await using var store = await TestStore.StartAsync();
+        var tokens = store.Get<ApiTokens>();
+        var ben = await EnrolAsync(store, "ben@example.org");
+        var eve = await EnrolAsync(store, "eve@example.org");
+        await tokens.IssueAsync(ben, ben, "expired", TokenScope.Read, TimeSpan.FromDays(1), TestStore.Cancellation);
+        store.Time.Advance(TimeSpan.FromDays(1));
+        var first = await tokens.IssueAsync(ben, ben, "a", TokenScope.Read, Month, TestStore.Cancellation);
+        var second = await tokens.IssueAsync(ben, ben, "b", TokenScope.Write, Month, TestStore.Cancellation);
+        var hers = await tokens.IssueAsync(eve, eve, "c", TokenScope.Read, Month, TestStore.Cancellation);
+        var records = store.Get<ServerRecords>();
+        var invitation = await records.InviteAgainAsync(ServerRecords.CommandLineActor, ben, TestStore.Cancellation);
+        Assert.NotNull(await tokens.FindHolderAsync(first.Secret, TestStore.Cancellation));
+        var before = (await ServerRecordsTests.KindsAsync(store)).Count;
+
+        // Where a revocation cannot be stored, the password is not either.
+        store.Sql("CREATE TRIGGER injected BEFORE UPDATE OF revoked_at ON api_tokens BEGIN SELECT RAISE(ABORT, 'injected'); END");
+        await Assert.ThrowsAnyAsync<Exception>(() => records.AcceptInvitationAsync(invitation.Secret, "a hash", TestStore.Cancellation));
+        Assert.Equal(0L, store.Value("SELECT count(*) FROM accounts WHERE PasswordHash IS NOT NULL"));
+        store.Sql("DROP TRIGGER injected");
+
+        await records.AcceptInvitationAsync(invitation.Secret, "a hash", TestStore.Cancellation);
+        Assert.Null(await tokens.FindHolderAsync(first.Secret, TestStore.Cancellation));
+        Assert.Null(await tokens.FindHolderAsync(second.Secret, TestStore.Cancellation));
+        Assert.NotNull(await tokens.FindHolderAsync(hers.Secret, TestStore.Cancellation));
+        Assert.Equal(["invitation-taken-up/1", "token-revoked/1", "token-revoked/1"], (await ServerRecordsTests.KindsAsync(store)).Skip(before));
+        var entry = await store.Projects.EntryAsync("server", before + 2, TestStore.Cancellation);
+        Assert.Equal(("token-revoked/1", ben), (entry.Kind, entry.By.PersonId));
+        Assert.True((await store.Get<StoreCheck>().RunAsync(TestStore.Cancellation)).Ok);
     }
 
     [Theory]

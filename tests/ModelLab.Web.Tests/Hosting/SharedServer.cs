@@ -18,6 +18,9 @@ public sealed class SharedServer : IAsyncLifetime
     /// <summary>Of the analyst, who owns what the tests open.</summary>
     public HttpClient Client { get; private set; } = null!;
 
+    /// <summary>Of the analyst, signed in by cookie.</summary>
+    public HttpClient Session { get; private set; } = null!;
+
     public HttpClient ReadOnly { get; private set; } = null!;
 
     public HttpClient StrangerClient { get; private set; } = null!;
@@ -28,6 +31,7 @@ public sealed class SharedServer : IAsyncLifetime
         Analyst = await Server.PersonAsync("Ada Quill");
         Stranger = await Server.PersonAsync("Sten Marsh");
         Client = await Server.ClientAsync(Analyst);
+        Session = await Server.SignedInAsync(Analyst);
         ReadOnly = await Server.ClientAsync(Analyst, TokenScope.Read);
         StrangerClient = await Server.ClientAsync(Stranger);
     }

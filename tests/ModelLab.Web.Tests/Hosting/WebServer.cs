@@ -1,3 +1,4 @@
+using System.Net;
 using System.Net.Http.Headers;
 using Microsoft.AspNetCore.Hosting;
 using Microsoft.AspNetCore.Identity;
@@ -56,6 +57,14 @@ public sealed class WebServer : WebApplicationFactory<Program>
 
     /// <summary>A client that sends a person's token.</summary>
     public async Task<HttpClient> ClientAsync(Person person, TokenScope scope = TokenScope.Write) => ClientWith((await TokenAsync(person, scope)).Secret);
+
+    /// <summary>A client that is signed in as a person, by cookie.</summary>
+    public async Task<HttpClient> SignedInAsync(Person person)
+    {
+        var client = Anonymous();
+        await client.PostJsonAsync("/sign-in", $$"""{"email":"{{person.Email}}","password":"{{Password}}"}""").JsonAsync(HttpStatusCode.OK);
+        return client;
+    }
 
     public HttpClient ClientWith(string token)
     {

@@ -101,12 +101,14 @@ public sealed class IdempotencyTests(SharedServer shared)
     public async Task A_secret_in_an_answer_does_not_lie_open_in_the_database()
     {
         const string Request = """{"name":"kept","scope":"read"}""";
-        var issued = await shared.Client.PostJsonAsync("/api/v1/tokens", Request, "key-8").JsonAsync(HttpStatusCode.Created);
+        var issued = await shared.Session.PostJsonAsync("/api/v1/tokens", Request, "key-8").JsonAsync(HttpStatusCode.Created);
         await using var context = await shared.Server.Services.GetRequiredService<IDbContextFactory<ModelLabContext>>().CreateDbContextAsync(TestContext.Current.CancellationToken);
         var row = await context.IdempotencyRecords.SingleAsync(r => r.Key == "key-8", TestContext.Current.CancellationToken);
         Assert.DoesNotContain(issued.Text("secret"), Encoding.Latin1.GetString(row.Body), StringComparison.Ordinal);
-        var again = await shared.Client.PostJsonAsync("/api/v1/tokens", Request, "key-8").JsonAsync(HttpStatusCode.Created);
+        var again = await shared.Session.PostJsonAsync("/api/v1/tokens", Request, "key-8").JsonAsync(HttpStatusCode.Created);
         Assert.Equal(issued.Text("secret"), again.Text("secret"));
+        var withToken = await shared.Client.PostJsonAsync("/api/v1/tokens", Request, "key-8").ProblemAsync(HttpStatusCode.Forbidden);
+        Assert.Equal("sessionOnly", withToken.Text("kind"));
     }
 
     [Theory]

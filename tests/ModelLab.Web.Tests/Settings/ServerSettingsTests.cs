@@ -16,6 +16,7 @@ public sealed class ServerSettingsTests
         Assert.Equal(Path.Combine(AppContext.BaseDirectory, "data", "keys"), settings.Storage.KeysFolder);
         Assert.Equal(1L << 30, settings.Uploads.MaximumBytes);
         Assert.Equal(12, settings.SignIn.MinimumPasswordLength);
+        Assert.Equal(72, settings.SignIn.LongestSessionHours);
         Assert.False(settings.Proxies.Any);
     }
 
@@ -32,6 +33,8 @@ public sealed class ServerSettingsTests
     [InlineData("ModelLab:Uploads:MaximumBytes", "0", "is 0; it may be from 1 to 68719476736.")]
     [InlineData("ModelLab:MaximumRequestBytes", "99999999999", "is 99999999999; it may be from 16384 to 67108864.")]
     [InlineData("ModelLab:SignIn:MinimumPasswordLength", "8", "is 8; it may be from 12 to 64.")]
+    [InlineData("ModelLab:SignIn:LongestSessionHours", "0", "is 0; it may be from 1 to 2160.")]
+    [InlineData("ModelLab:SignIn:LongestSessionHours", "11", "is 11, less than SessionHours (12).")]
     [InlineData("ModelLab:SignIn:LockOutMinutes", "1.5", "is '1.5', which is no whole number.")]
     [InlineData("ModelLab:Tokens:DefaultDays", "", "is '', which is no whole number.")]
     [InlineData("ModelLab:Proxies:Addresses", "10.0.0.1,proxy", "holds 'proxy', which is no IP address.")]

@@ -1,6 +1,8 @@
 using Microsoft.AspNetCore.Authorization;
 using Microsoft.AspNetCore.OpenApi;
 using Microsoft.OpenApi;
+using ModelLab.Web.Features.SignIn;
+using ModelLab.Web.Features.Tokens;
 using ModelLab.Web.Http;
 
 namespace ModelLab.Web.Features.ApiReference;
@@ -12,6 +14,7 @@ public static class OpenApiRegistration
     public const string DocumentName = "v1";
 
     private const string BearerScheme = "apiToken";
+    private const string SessionScheme = "session";
 
     /// <summary>Registers the document.</summary>
     public static void AddApiDescription(this IServiceCollection services) => services.AddOpenApi(DocumentName, options =>
@@ -44,6 +47,13 @@ public static class OpenApiRegistration
             Scheme = "bearer",
             Description = "An API token of a person, of scope read or write: `Authorization: Bearer TOKEN`. A page uses the session cookie instead.",
         };
+        document.Components.SecuritySchemes[SessionScheme] = new OpenApiSecurityScheme
+        {
+            Type = SecuritySchemeType.ApiKey,
+            In = ParameterLocation.Cookie,
+            Name = SessionCookie.Name,
+            Description = "The session of a person who signed in by `POST /sign-in`.",
+        };
         return Task.CompletedTask;
     }
 
@@ -54,7 +64,8 @@ public static class OpenApiRegistration
         operation.Responses ??= [];
         if (!open)
         {
-            operation.Security = [new OpenApiSecurityRequirement { [new OpenApiSecuritySchemeReference(BearerScheme, context.Document)] = [] }];
+            var scheme = metadata.OfType<SessionOnly>().Any() ? SessionScheme : BearerScheme;
+            operation.Security = [new OpenApiSecurityRequirement { [new OpenApiSecuritySchemeReference(scheme, context.Document)] = [] }];
             AddProblem(operation, "401", "No token or session, or one that does not hold.");
         }
 

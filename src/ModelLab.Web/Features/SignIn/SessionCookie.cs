@@ -1,3 +1,4 @@
+using System.Globalization;
 using System.Security.Claims;
 using Microsoft.AspNetCore.Authentication;
 using Microsoft.AspNetCore.Authentication.Cookies;
@@ -13,6 +14,9 @@ public static class SessionCookie
     /// <summary>Its name.</summary>
     public const string Name = "ModelLab.Session";
 
+    /// <summary>When the person signed in. The cookie's own time of issue moves on whenever it is renewed.</summary>
+    private const string SignedInAt = "signed-in-at";
+
     /// <summary>Sets the cookie up: out of reach of scripts, not sent along from other sites, and asked of the account at every request.</summary>
     public static void Configure(CookieAuthenticationOptions options, SignInSettings settings)
     {
@@ -26,14 +30,30 @@ public static class SessionCookie
         options.LogoutPath = "/sign-out";
         options.AccessDeniedPath = "/";
         options.ReturnUrlParameter = "returnUrl";
-        options.Events.OnValidatePrincipal = ValidateAsync;
+        options.Events.OnSigningIn = context =>
+        {
+            context.Properties.SetString(SignedInAt, Now(context.HttpContext).ToString("O", CultureInfo.InvariantCulture));
+            return Task.CompletedTask;
+        };
+        options.Events.OnValidatePrincipal = context => ValidateAsync(context, TimeSpan.FromHours(settings.LongestSessionHours));
         options.Events.OnRedirectToLogin = context => StatusOrRedirect(context, StatusCodes.Status401Unauthorized);
         options.Events.OnRedirectToAccessDenied = context => StatusOrRedirect(context, StatusCodes.Status403Forbidden);
     }
 
-    /// <summary>A session ends at once when its person is disabled or chooses a new password: either changes the account's security stamp.</summary>
-    private static async Task ValidateAsync(CookieValidatePrincipalContext context)
+    private static DateTimeOffset Now(HttpContext context) => context.RequestServices.GetRequiredService<TimeProvider>().GetUtcNow();
+
+    /// <summary>
+    /// A session ends at once when its person is disabled, signs out or chooses a new password: each changes the account's security
+    /// stamp. However much it is used, it ends when it has lasted its longest.
+    /// </summary>
+    private static async Task ValidateAsync(CookieValidatePrincipalContext context, TimeSpan longest)
     {
+        if (!DateTimeOffset.TryParse(context.Properties.GetString(SignedInAt), CultureInfo.InvariantCulture, out var since) || Now(context.HttpContext) - since >= longest)
+        {
+            context.RejectPrincipal();
+            return;
+        }
+
         var accounts = context.HttpContext.RequestServices.GetRequiredService<UserManager<Account>>();
         var id = context.Principal?.FindFirstValue(ClaimTypes.NameIdentifier);
         var account = id is null ? null : await accounts.FindByIdAsync(id);

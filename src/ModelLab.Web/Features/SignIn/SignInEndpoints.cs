@@ -5,6 +5,7 @@ using ModelLab.Projects;
 using ModelLab.Projects.People;
 using ModelLab.Store.Accounts;
 using ModelLab.Store.Server;
+using ModelLab.Web.Features.Tokens;
 using ModelLab.Web.Http;
 
 namespace ModelLab.Web.Features.SignIn;
@@ -33,15 +34,15 @@ public static class SignInEndpoints
             .WithProblems(400, 403, 422, 429);
         group.MapPost("/invitations/{token}", AcceptAsync)
             .WithName("AcceptInvitation")
-            .WithSummary("Takes up an invitation by choosing a password.")
+            .WithSummary("Takes up an invitation by choosing a password. Sessions and API tokens that the person had hold no longer.")
             .Accepts<PasswordRequest>("application/json", FormBody.MediaType)
             .Produces<PersonAnswer>()
             .WithProblems(400, 403, 422, 429);
-        endpoints.MapPost("/sign-out", (Delegate)SignOutAsync)
+        endpoints.MapPost("/sign-out", SignOutAsync)
             .AllowAnonymous()
             .WithTags("Sign-in")
             .WithName("SignOut")
-            .WithSummary("Ends the session.")
+            .WithSummary("Ends all sessions of the person, in every browser; API tokens stay.")
             .Produces(StatusCodes.Status204NoContent);
     }
 
@@ -78,8 +79,16 @@ public static class SignInEndpoints
         }
     }
 
-    private static async Task<IResult> SignOutAsync(HttpContext context)
+    /// <summary>The browser forgets its cookie; what was copied of it is dead because the account's sessions end.</summary>
+    private static async Task<IResult> SignOutAsync(HttpContext context, ServerRecords records, CancellationToken cancellation)
     {
+        // The session is asked for by name: what an Authorization header says does not count here, nor does a cookie that holds no longer.
+        var session = await context.AuthenticateAsync(IdentityConstants.ApplicationScheme);
+        if (session.Principal is { } person)
+        {
+            await records.EndSessionsAsync(person.PersonId(), cancellation);
+        }
+
         await context.SignOutAsync(IdentityConstants.ApplicationScheme);
         return FormBody.IsForm(context.Request) ? Results.Redirect("/") : Results.NoContent();
     }

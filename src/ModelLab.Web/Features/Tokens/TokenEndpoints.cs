@@ -19,9 +19,10 @@ public static class TokenEndpoints
             .WithSummary("Your API tokens, newest first, with the expired and the revoked.");
         group.MapPost(string.Empty, IssueAsync)
             .WithName("IssueToken")
-            .WithSummary("Issues an API token for yourself. Its secret is told once. A token made with a token does not outlive it.")
+            .WithSummary("Issues an API token for yourself. Its secret is told once. Only for a signed-in session: a token cannot make another.")
+            .WithMetadata(new SessionOnly())
             .Produces<IssuedTokenAnswer>(StatusCodes.Status201Created)
-            .WithProblems(400, 422);
+            .WithProblems(400, 403, 422);
         group.MapDelete("/{id}", RevokeAsync)
             .WithName("RevokeToken")
             .WithSummary("Revokes one of your API tokens at once.")
@@ -30,14 +31,9 @@ public static class TokenEndpoints
     }
 
     private static async Task<IResult> IssueAsync(
-        TokenRequest request, ClaimsPrincipal user, ApiTokens tokens, TokenSettings settings, TimeProvider clock, CancellationToken cancellation)
+        TokenRequest request, ClaimsPrincipal user, ApiTokens tokens, TokenSettings settings, CancellationToken cancellation)
     {
         var lifetime = TokenLifetime.Of(request.Days, settings);
-        if (user.TokenExpiry() is { } expiry && expiry - clock.GetUtcNow() is var left && left < lifetime)
-        {
-            lifetime = left;
-        }
-
         var issued = await tokens.IssueAsync(user.PersonId(), user.PersonId(), request.Name, request.Scope, lifetime, cancellation);
         return Results.Json(new IssuedTokenAnswer(issued.Token.Id, issued.Secret, TokenAnswer.Of(issued.Token)), statusCode: StatusCodes.Status201Created);
     }

@@ -80,6 +80,54 @@ public sealed class SignInTests
     }
 
     [Fact]
+    public async Task A_session_in_use_ends_after_its_longest_time()
+    {
+        await using var server = await WebServer.StartAsync(s => s.Settings["SignIn:LongestSessionHours"] = "24");
+        using var client = await server.SignedInAsync(await server.PersonAsync("Ada Quill"));
+        for (var hours = 8; hours < 24; hours += 8)
+        {
+            server.Clock.Advance(TimeSpan.FromHours(8));
+            using var answer = await client.FetchAsync("/api/v1/me");
+            Assert.Equal(HttpStatusCode.OK, answer.StatusCode);
+            Assert.True(answer.Headers.Contains("Set-Cookie"), "The cookie is renewed by use.");
+        }
+
+        server.Clock.Advance(TimeSpan.FromHours(8));
+        await client.FetchAsync("/api/v1/me").ProblemAsync(HttpStatusCode.Unauthorized);
+        await SignInAsync(client).JsonAsync(HttpStatusCode.OK);
+        await client.FetchAsync("/api/v1/me").JsonAsync(HttpStatusCode.OK);
+    }
+
+    [Fact]
+    public async Task Signing_out_ends_every_session_of_the_person_and_no_other()
+    {
+        await using var server = await WebServer.StartAsync();
+        var person = await server.PersonAsync("Ada Quill");
+        using var client = server.Anonymous();
+        using var signedIn = await SignInAsync(client);
+        var cookie = signedIn.Headers.GetValues("Set-Cookie").Single().Split(';')[0];
+        using var elsewhere = await server.SignedInAsync(person);
+        using var other = await server.SignedInAsync(await server.PersonAsync("Sten Marsh"));
+        using var token = await server.ClientAsync(person);
+        Assert.Equal(HttpStatusCode.OK, await WithCookieAsync(server, HttpMethod.Get, "/api/v1/me", cookie));
+
+        // Whoever signs out with a token alone ends no session.
+        Assert.Equal(HttpStatusCode.NoContent, (await token.PostAsync("/sign-out", null, TestContext.Current.CancellationToken)).StatusCode);
+        await elsewhere.FetchAsync("/api/v1/me").JsonAsync(HttpStatusCode.OK);
+
+        Assert.Equal(HttpStatusCode.NoContent, (await client.PostAsync("/sign-out", null, TestContext.Current.CancellationToken)).StatusCode);
+        Assert.Equal(HttpStatusCode.Unauthorized, await WithCookieAsync(server, HttpMethod.Get, "/api/v1/me", cookie));
+        await elsewhere.FetchAsync("/api/v1/me").ProblemAsync(HttpStatusCode.Unauthorized);
+        await other.FetchAsync("/api/v1/me").JsonAsync(HttpStatusCode.OK);
+        await token.FetchAsync("/api/v1/me").JsonAsync(HttpStatusCode.OK);
+
+        // A dead cookie cannot end the sessions that came after it.
+        using var later = await server.SignedInAsync(person);
+        Assert.Equal(HttpStatusCode.NoContent, await WithCookieAsync(server, HttpMethod.Post, "/sign-out", cookie));
+        await later.FetchAsync("/api/v1/me").JsonAsync(HttpStatusCode.OK);
+    }
+
+    [Fact]
     public async Task Disabling_a_person_ends_the_session_at_once()
     {
         await using var server = await WebServer.StartAsync();
@@ -207,6 +255,15 @@ public sealed class SignInTests
         var problem = await server.Anonymous().PostAsync("/sign-in", new FormUrlEncodedContent([new("email", "x@example.org")]), TestContext.Current.CancellationToken)
             .ProblemAsync(HttpStatusCode.UnprocessableEntity);
         Assert.Equal("password", problem["errors"]![0]!.Text("column"));
+    }
+
+    private static async Task<HttpStatusCode> WithCookieAsync(WebServer server, HttpMethod method, string address, string cookie)
+    {
+        using var client = server.CreateClient(new() { AllowAutoRedirect = false, HandleCookies = false });
+        using var request = new HttpRequestMessage(method, address);
+        request.Headers.Add("Cookie", cookie);
+        using var answer = await client.SendAsync(request, TestContext.Current.CancellationToken);
+        return answer.StatusCode;
     }
 
     private static async Task<string?> LedToAsync(WebServer server, string returnUrl)

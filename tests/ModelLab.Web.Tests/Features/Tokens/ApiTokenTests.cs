@@ -119,7 +119,7 @@ public sealed class ApiTokenTests(SharedServer shared)
     [Fact]
     public async Task A_person_issues_lists_and_revokes_own_tokens()
     {
-        var issued = await shared.Client.PostJsonAsync("/api/v1/tokens", """{"name":"script","scope":"read","days":7}""").JsonAsync(HttpStatusCode.Created);
+        var issued = await shared.Session.PostJsonAsync("/api/v1/tokens", """{"name":"script","scope":"read","days":7}""").JsonAsync(HttpStatusCode.Created);
         using var client = shared.Server.ClientWith(issued.Text("secret"));
         await client.FetchAsync("/api/v1/me").JsonAsync(HttpStatusCode.OK);
         var listed = (await shared.Client.FetchAsync("/api/v1/tokens").JsonAsync(HttpStatusCode.OK)).AsArray();
@@ -133,12 +133,19 @@ public sealed class ApiTokenTests(SharedServer shared)
     }
 
     [Fact]
-    public async Task A_token_made_with_a_token_does_not_outlive_it()
+    public async Task A_token_cannot_make_another()
     {
-        using var client = shared.Server.ClientWith((await shared.Server.TokenAsync(shared.Analyst, days: 2)).Secret);
-        var me = await client.FetchAsync("/api/v1/me").JsonAsync(HttpStatusCode.OK);
-        var issued = await client.PostJsonAsync("/api/v1/tokens", """{"name":"longer","scope":"write","days":300}""").JsonAsync(HttpStatusCode.Created);
-        Assert.Equal(me.Text("expiresAt"), issued["token"]!.Text("expiresAt"));
+        const string Request = """{"name":"offspring","scope":"write"}""";
+        var problem = await shared.Client.PostJsonAsync("/api/v1/tokens", Request).ProblemAsync(HttpStatusCode.Forbidden);
+        Assert.Equal("sessionOnly", problem.Text("kind"));
+        Assert.Contains("a token cannot make another", problem.Text("detail"), StringComparison.Ordinal);
+
+        // A session beside the token does not help: the header decides who calls.
+        using var both = await shared.Server.SignedInAsync(shared.Analyst);
+        both.DefaultRequestHeaders.Authorization = shared.Client.DefaultRequestHeaders.Authorization;
+        await both.PostJsonAsync("/api/v1/tokens", Request).ProblemAsync(HttpStatusCode.Forbidden);
+        var listed = (await shared.Client.FetchAsync("/api/v1/tokens").JsonAsync(HttpStatusCode.OK)).AsArray();
+        Assert.DoesNotContain(listed, t => t!.Text("name") == "offspring");
     }
 
     [Theory]
@@ -147,7 +154,7 @@ public sealed class ApiTokenTests(SharedServer shared)
     [InlineData("""{"name":"  ","scope":"read"}""", "name")]
     public async Task A_token_that_cannot_be_is_refused_by_its_field(string body, string field)
     {
-        var problem = await shared.Client.PostJsonAsync("/api/v1/tokens", body).ProblemAsync(HttpStatusCode.UnprocessableEntity);
+        var problem = await shared.Session.PostJsonAsync("/api/v1/tokens", body).ProblemAsync(HttpStatusCode.UnprocessableEntity);
         Assert.Equal(field, problem["errors"]![0]!.Text("column"));
     }
 
