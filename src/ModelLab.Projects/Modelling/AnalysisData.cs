@@ -5,6 +5,7 @@ using ModelLab.Projects.Entries;
 using ModelLab.Projects.Preparations;
 using ModelLab.Projects.Storage;
 using ModelLab.Projects.Views;
+using ModelLab.Statistics.Description;
 using ModelLab.Statistics.Designs;
 
 namespace ModelLab.Projects.Modelling;
@@ -18,7 +19,15 @@ namespace ModelLab.Projects.Modelling;
 /// <param name="Facts">Their number and hash, and what missing values cost.</param>
 /// <param name="RowsContent">The row numbers, to be kept under their hash.</param>
 public sealed record AnalysisData(
-    SourceView Source, DataDictionary Dictionary, PreparationView? Preparation, DataTable Table, int[] Rows, AnalysedRows Facts, KeptContent RowsContent);
+    SourceView Source, DataDictionary Dictionary, PreparationView? Preparation, DataTable Table, int[] Rows, AnalysedRows Facts, KeptContent RowsContent)
+{
+    private readonly Lazy<IReadOnlyList<Correlation>> correlations = new(
+        () => Correlations.Pearson([.. Table.Columns.OfType<NumberColumn>()], Rows, confidence: 0.95));
+
+    /// <summary>Correlations of the numeric variables named on the rows analysed, pair by pair. All pairs are computed once for all models on them.</summary>
+    public IReadOnlyList<Correlation> CorrelationsAmong(IReadOnlySet<string> names) =>
+        [.. correlations.Value.Where(c => names.Contains(c.First) && names.Contains(c.Second))];
+}
 
 /// <summary>Loads what a path's models are fitted on.</summary>
 public sealed class AnalysisDataLoader(IReadModelSource store, ISourceVault vault, DatasetColumns columns)

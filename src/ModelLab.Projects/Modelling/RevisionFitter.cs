@@ -4,7 +4,6 @@ using ModelLab.Ledger;
 using ModelLab.Ledger.Canonical;
 using ModelLab.Projects.Entries;
 using ModelLab.Statistics.Collinearity;
-using ModelLab.Statistics.Description;
 using ModelLab.Statistics.Designs;
 using ModelLab.Statistics.Inference;
 using ModelLab.Statistics.Selection;
@@ -74,8 +73,7 @@ public static class RevisionFitter
     private static RevisionFigures Figures(
         AnalysisData data, PathPlan plan, IReadOnlyList<CategoryCoding> codings, ModelResults results, IReadOnlyList<Term> terms)
     {
-        var numbers = terms.OfType<VariableTerm>().Select(t => data.Table.Find(t.Variable)).OfType<NumberColumn>().ToList();
-        var correlations = Correlations.Pearson(numbers, data.Rows, plan.Confidence);
+        var correlations = data.CorrelationsAmong(terms.OfType<VariableTerm>().Select(t => t.Variable).ToHashSet(StringComparer.Ordinal));
         var f = results.Fit;
         return new RevisionFigures(
             [.. results.Coefficients.Select(c => new RevisionCoefficient(
