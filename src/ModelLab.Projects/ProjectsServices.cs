@@ -26,6 +26,7 @@ public static class ProjectsServices
         .AddSingleton<AnalysisDataLoader>()
         .AddSingleton<VariableStates>()
         .AddSingleton<PreparationBuilder>()
+        .AddSingleton<CarriedRows>()
         .AddSingleton<PathDesk>()
         .AddSingleton<RevisionReader>()
         .AddSingleton<ProjectGate>()

@@ -17,7 +17,7 @@ namespace ModelLab.Projects.Paths;
 public sealed record AgainRequest(string? Name, string? DatasetId, string? Reason);
 
 /// <summary>Runs a path again on a corrected dataset: the same decisions in the same order, each refitted. The old path stays as it is.</summary>
-public sealed class RunPathAgain(ProjectGate gate, IProjectStore store, ISourceVault vault, AnalysisDataLoader loader, PathDesk desk, PreparationBuilder preparations)
+public sealed class RunPathAgain(ProjectGate gate, IProjectStore store, ISourceVault vault, AnalysisDataLoader loader, PathDesk desk, PreparationBuilder preparations, CarriedRows carried)
 {
     /// <summary>Runs it and returns the id of the new path.</summary>
     /// <exception cref="RefusedException">A decision no longer holds on the corrected data; names it. Nothing was stored.</exception>
@@ -103,25 +103,13 @@ public sealed class RunPathAgain(ProjectGate gate, IProjectStore store, ISourceV
     private async Task CarryPreparationAsync(Run run, string preparationId, CancellationToken cancellation)
     {
         var old = await store.ReadAsync(run.ProjectId, m => m.Find<PreparationView>(preparationId)!, cancellation);
-        RequireSameRows(old, run.Old.RowsBefore, run.Old.Dictionary.Dataset.Rows);
+        await carried.RequireSameAsync(run.ProjectId, old, run.Old.Before, run.Old.Now, cancellation);
         var steps = await RepeatedSteps.OfAsync(store, vault, run.ProjectId, old, run.Old.Dictionary, cancellation);
         var built = await preparations.BuildAsync(run.ProjectId, run.Old.Dictionary.Dataset.Id, run.Old.Dictionary.Entry, null, steps, cancellation);
         run.Acts.Add(built.Act(old.Steps[^1].Reason));
         run.Preparation = built.AsView(gate.Clock.GetUtcNow());
         run.Labels = built.Labels;
         run.Data = null;
-    }
-
-    /// <summary>Rows are left out by number. Where rows came or went, a number may name another row, which must not be left out in silence.</summary>
-    private static void RequireSameRows(PreparationView old, long before, long now)
-    {
-        if (before != now && old.Steps.Any(s => s.Kind is StepKind.ExcludeRows or StepKind.RestoreRows))
-        {
-            throw RefusedException.Invalid(
-                $"The path leaves out rows by their numbers, and the corrected file has {now} rows where the earlier one had {before}: a number may name another row now. "
-                + "Start a new path on the corrected dataset and leave the rows out there.",
-                "datasetId");
-        }
     }
 
     private static OldPath Read(IReadModel model, string pathId, string? datasetId)
@@ -135,10 +123,16 @@ public sealed class RunPathAgain(ProjectGate gate, IProjectStore store, ISourceV
                 : model.Find<DatasetView>(earlier.PreviousDatasetId)!;
         }
 
-        return new OldPath(path, model.Find<DatasetView>(path.Plan.DatasetId)!.Rows, DataDictionary.At(model, dataset), [.. model.All<RevisionView>().Where(r => r.PathId == pathId).OrderBy(r => r.Number)]);
+        return new OldPath(path, Table(model, model.Find<DatasetView>(path.Plan.DatasetId)!, path.Plan.DictionaryEntry), Table(model, dataset, null), [.. model.All<RevisionView>().Where(r => r.PathId == pathId).OrderBy(r => r.Number)]);
     }
 
-    private sealed record OldPath(PathView Path, long RowsBefore, DataDictionary Dictionary, IReadOnlyList<RevisionView> Revisions);
+    private static ReadTable Table(IReadModel model, DatasetView dataset, long? entry) =>
+        new(DataDictionary.At(model, dataset, entry), model.Find<SourceView>(dataset.SourceId)!);
+
+    private sealed record OldPath(PathView Path, ReadTable Before, ReadTable Now, IReadOnlyList<RevisionView> Revisions)
+    {
+        public DataDictionary Dictionary => Now.Dictionary;
+    }
 
     private sealed record Run(string ProjectId, OldPath Old, List<Act> Acts)
     {
