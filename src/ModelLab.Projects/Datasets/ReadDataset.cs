@@ -39,13 +39,14 @@ public sealed class ReadDataset(ProjectGate gate, IProjectStore store, ISourceVa
         var fileName = EntryKinds.ReadSealed<string>(await vault.UnsealAsync(projectId, found.Source.EntryNumber, cancellation), "fileName");
         var readings = new List<VariableReading>();
 
-        // Few columns at a time: a large file is described without holding all of it.
+        // Few columns at a time, and none of them kept: a large file is described without holding all of it.
+        var passing = found.Source.Rows * found.Dictionary.Variables.Count > CellsAtATime ? new DatasetColumns(vault, new ColumnCache(budget: 0)) : columns;
         var group = (int)Math.Max(1, CellsAtATime / Math.Max(1, found.Source.Rows));
         foreach (var some in found.Dictionary.Variables.Chunk(group))
         {
             var requests = some.Select(v => Request(v, contents)).ToList();
             var wanted = requests.OfType<ColumnRequest>().ToList();
-            var read = (await columns.ReadAsync(projectId, found.Source, wanted, cancellation)).ToDictionary(c => c.Name, StringComparer.Ordinal);
+            var read = (await passing.ReadAsync(projectId, found.Source, wanted, cancellation)).ToDictionary(c => c.Name, StringComparer.Ordinal);
             readings.AddRange(some.Select(v => Reading(v, contents, read.GetValueOrDefault(v.Name))));
         }
 
