@@ -52,6 +52,7 @@ public sealed class JourneyTests(SharedServer shared)
         Assert.Equal(2, (await client.FetchAsync($"{root}/comments").JsonAsync(HttpStatusCode.OK)).AsArray().Count);
         _ = (await client.FetchAsync($"{root}/findings").JsonAsync(HttpStatusCode.OK)).AsArray();
 
+        await SourceAsync(client, root);
         await LedgerAsync(client, root);
         var replay = await client.PostAsync($"{root}/replay", null, TestContext.Current.CancellationToken).JsonAsync(HttpStatusCode.OK);
         Assert.True(replay["ok"]!.GetValue<bool>());
@@ -100,6 +101,18 @@ public sealed class JourneyTests(SharedServer shared)
         using var picture = new HttpRequestMessage(HttpMethod.Get, address);
         picture.Headers.Add("Accept", "image/png");
         await client.SendAsync(picture, TestContext.Current.CancellationToken).ProblemAsync(HttpStatusCode.NotAcceptable);
+    }
+
+    private static async Task SourceAsync(HttpClient client, string root)
+    {
+        var source = Assert.Single((await client.FetchAsync($"{root}/sources").JsonAsync(HttpStatusCode.OK)).AsArray())!;
+        using var answer = await client.FetchAsync($"{root}/sources/{source["source"]!.Text("id")}/content");
+        var bytes = await answer.Content.ReadAsByteArrayAsync(TestContext.Current.CancellationToken);
+        Assert.Equal(Table(), bytes);
+        Assert.Equal(source["source"]!.Text("sha256"), Convert.ToHexStringLower(System.Security.Cryptography.SHA256.HashData(bytes)));
+        Assert.Equal("application/octet-stream", answer.Content.Headers.ContentType?.MediaType);
+        Assert.Equal("attachment", answer.Content.Headers.ContentDisposition?.DispositionType);
+        await client.FetchAsync($"{root}/sources/none/content").ProblemAsync(HttpStatusCode.NotFound);
     }
 
     private static async Task LedgerAsync(HttpClient client, string root)
