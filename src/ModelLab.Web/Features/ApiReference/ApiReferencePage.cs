@@ -66,7 +66,7 @@ public static class ApiReferencePage
         foreach (var (type, content) in description.RequestBody?.Content ?? new Dictionary<string, OpenApiMediaType>())
         {
             page.Append("<h3>Body, ").Append(Text(type)).Append("</h3>");
-            WriteSchema(page, content.Schema, 0);
+            WriteSchema(page, content.Schema, asked: true);
         }
 
         foreach (var (status, response) in description.Responses ?? [])
@@ -74,18 +74,20 @@ public static class ApiReferencePage
             page.Append("<h3>").Append(Text(status)).Append(": ").Append(Text(response.Description)).Append("</h3>");
             if (status.StartsWith('2') && response.Content?.Values.FirstOrDefault() is { } content)
             {
-                WriteSchema(page, content.Schema, 0);
+                WriteSchema(page, content.Schema, asked: false);
             }
         }
 
         page.Append("</details>");
     }
 
-    private static void WriteSchema(StringBuilder page, IOpenApiSchema? schema, int depth)
+    /// <summary>The members, as a list. What is asked for says which are needed; an answer has them all.</summary>
+    private static void WriteSchema(StringBuilder page, IOpenApiSchema? schema, bool asked, int depth = 0)
     {
-        if (schema?.Items is { } items)
+        if ((schema?.Items ?? Present(schema)) is { } inner)
         {
-            WriteSchema(page, items, depth);
+            // Of a list its elements, of a body that may be left out the body.
+            WriteSchema(page, inner, asked, depth);
             return;
         }
 
@@ -97,21 +99,29 @@ public static class ApiReferencePage
         page.Append("<ul>");
         foreach (var (name, member) in properties)
         {
-            page.Append("<li><code>").Append(Text(name)).Append("</code> ").Append(Text(TypeOf(member))).Append(schema.Required?.Contains(name) == true ? ", needed" : string.Empty);
-            if (!string.IsNullOrEmpty(member.Description))
+            page.Append("<li><code>").Append(Text(name)).Append("</code> ").Append(Text(TypeOf(member))).Append(asked && schema.Required?.Contains(name) == true ? ", needed" : string.Empty);
+            if ((string.IsNullOrEmpty(member.Description) ? Present(member)?.Description : member.Description) is { Length: > 0 } said)
             {
-                page.Append(". ").Append(Prose(member.Description));
+                page.Append(". ").Append(Prose(said));
             }
 
-            WriteSchema(page, member, depth + 1);
+            WriteSchema(page, member, asked, depth + 1);
             page.Append("</li>");
         }
 
         page.Append("</ul>");
     }
 
+    /// <summary>What a schema that allows null is otherwise; null where it is not of that form.</summary>
+    private static IOpenApiSchema? Present(IOpenApiSchema? schema) => schema?.OneOf?.FirstOrDefault(c => c.Type != JsonSchemaType.Null);
+
     private static string TypeOf(IOpenApiSchema schema)
     {
+        if (Present(schema) is { } present)
+        {
+            return $"null or {TypeOf(present)}";
+        }
+
         if (schema.Enum is { Count: > 0 } values)
         {
             return string.Join(" | ", values.Select(v => v?.ToString() ?? "null"));

@@ -61,8 +61,9 @@ public static class LedgerEndpoints
         {
             return Receipt.Parse(CanonicalJson.Serialise(receipt));
         }
-        catch (Exception e) when (e is FormatException or CanonicalFormException)
+        catch (Exception e) when (e is FormatException or ArgumentException)
         {
+            // Not a receipt, or a value that has no canonical form, such as a number beyond what a double holds.
             throw RefusedException.Invalid($"This is no receipt of this program: {e.Message}", $"receipts[{place}]");
         }
     }

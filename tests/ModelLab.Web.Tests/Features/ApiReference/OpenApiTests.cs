@@ -102,6 +102,15 @@ public sealed class OpenApiTests(SharedServer shared)
     }
 
     [Fact]
+    public async Task The_page_names_the_values_of_choices_and_the_members_of_bodies_that_may_be_left_out()
+    {
+        var page = await shared.Client.GetStringAsync("/openapi/v1", TestContext.Current.CancellationToken);
+        Assert.Contains("<code>cause</code> null or recordingError | outsidePopulation | duplicate | influence | other", page, StringComparison.Ordinal);
+        Assert.Contains("<code>receipts</code> list of object. The files as they were received", page, StringComparison.Ordinal);
+        Assert.DoesNotContain("<code>cause</code> object", page, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public async Task Every_member_of_every_schema_has_a_type()
     {
         var offenders = new List<string>();

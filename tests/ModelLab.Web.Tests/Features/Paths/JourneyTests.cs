@@ -142,6 +142,7 @@ public sealed class JourneyTests(SharedServer shared)
         Assert.False(refused["receipts"]![0]!["ok"]!.GetValue<bool>());
         var nothing = await client.PostJsonAsync($"{root}/ledger/verify", """{"receipts":[{"count":1}]}""").ProblemAsync(HttpStatusCode.UnprocessableEntity);
         Assert.Equal("receipts[0]", nothing["errors"]![0]!.Text("column"));
+        await client.PostJsonAsync($"{root}/ledger/verify", """{"receipts":[{"count":1e400}]}""").ProblemAsync(HttpStatusCode.UnprocessableEntity);
     }
 
     private static string Decision(string kind, string after) =>
